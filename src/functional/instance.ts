@@ -4,8 +4,9 @@ import { interpret, type Scope } from '../expression/interpret.ts';
 import { constant, variable } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import type { Rational } from '../number/rational.ts';
-import type { ExactExchange, Functional, Part } from './functional.ts';
-import { type PartEnergy, partEnergy, spinSum } from './part.ts';
+import type { Frame, Instance, PartEnergy } from './frame.ts';
+import type { ExactExchange, Functional } from './functional.ts';
+import { partEnergy, spinSum } from './part.ts';
 import { type Place, slicePlace } from './place.ts';
 import { type Channel, quantityOf } from './quantities.ts';
 
@@ -23,25 +24,6 @@ export interface InstanceOptions {
   readonly parameters?: ReadonlyMap<string, NodeId>;
   /** Keep every parameter that states its printed digits as a variable, and note it here. */
   readonly printed?: Map<string, PrintedParameter>;
-}
-
-/** A functional in one graph with its parameters settled; asks a place for the quantities it needs. */
-export interface Instance {
-  readonly functional: Functional;
-  readonly graph: Graph;
-  parameter(name: string): NodeId;
-  callFunction(name: string, args: readonly NodeId[]): NodeId;
-  /** The energy of a part at a place; undefined where the functional has no such part. */
-  part(name: PartName, place: Place): PartEnergy | undefined;
-  imported(alias: string): Instance;
-  interpretAt(expression: Expression, frame: Frame): NodeId;
-}
-
-/** Where an expression stands: the place, the part's own steps, and the spin channel inside a sum over spin. */
-export interface Frame {
-  readonly place: Place;
-  readonly part?: Part;
-  readonly channel?: Channel;
 }
 
 /** Joins a functional to a graph. Same graph, same options: same nodes. */

@@ -2,17 +2,11 @@ import type { Expression } from '../expression/expression.ts';
 import { add, choice, constant, div, mul, neg, power, sub } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { rational } from '../number/rational.ts';
+import type { Frame, Instance, PartEnergy } from './frame.ts';
 import type { Form, Part } from './functional.ts';
-import type { Frame, Instance } from './instance.ts';
 import { type Place, slicePlace } from './place.ts';
 import type { Channel } from './quantities.ts';
 import { quotientByUnit } from './quotient.ts';
-
-/** The energy of one part at a place: per particle of the whole density, and over ε_x^unif (F). */
-export interface PartEnergy {
-  readonly perParticle: NodeId;
-  readonly enhancement: NodeId;
-}
 
 /** The energy of a part in any of its forms. */
 export function partEnergy(instance: Instance, part: Part, place: Place): PartEnergy {
@@ -22,7 +16,13 @@ export function partEnergy(instance: Instance, part: Part, place: Place): PartEn
   switch (form.kind) {
     case 'enhancement': {
       const enhancement = spinScaled(instance, part, form.value, place);
-      return { enhancement, perParticle: neg(graph, mul(graph, place.unit, enhancement)) };
+      return {
+        enhancement,
+        // Made only when asked for: an imported enhancement factor is evaluated without r_s.
+        get perParticle() {
+          return neg(graph, mul(graph, place.unit, enhancement));
+        },
+      };
     }
     case 'per-particle':
       return fromPerParticle(graph, place, instance.interpretAt(form.value, frame));

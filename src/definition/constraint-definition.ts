@@ -17,11 +17,6 @@ export interface ConstantChoice {
   readonly place: SourcePlace;
 }
 
-export interface Exclusion {
-  readonly when: SourceText;
-  readonly reason: string;
-}
-
 /** Rungs that cannot meet this condition (together with another one, when it is named). */
 export interface Conflict {
   readonly rungs: readonly Rung[];
@@ -49,6 +44,8 @@ export interface ConstraintDefinition {
   readonly localForm?: string;
   readonly derivation?: string;
   readonly force: Force;
+  /** Force for one rung, or for functionals with exact exchange, where it differs. */
+  readonly forceFor: Readonly<Partial<Record<Rung | 'hybrid', Force>>>;
   readonly status: Status;
   readonly gate?: { readonly level: GateLevel; readonly reason: string };
   readonly sources: readonly string[];
@@ -63,7 +60,6 @@ export interface ConstraintDefinition {
   readonly relative: boolean;
   readonly tolerance: number;
   readonly toleranceReason?: string;
-  readonly exclude: readonly Exclusion[];
   readonly cannotMeet: readonly Conflict[];
   readonly holds: readonly KnownCase[];
   readonly breaks: readonly KnownCase[];

@@ -10,13 +10,6 @@ export const spaces = ['slice', 'spin'] as const;
 const rungs = z.array(z.enum(['lda', 'gga', 'meta-gga'])).min(1, { error: 'a list with at least one rung' });
 const coordinate = expressionField('a decimal number or an expression').optional();
 
-const exclusion = z.strictObject({
-  when: expressionField('a comparison').meta({
-    description: 'Comparison that is true where the condition is not asked.',
-  }),
-  reason: textField().meta({ description: 'Why.' }),
-});
-
 const conflict = z.strictObject({
   rungs: rungs.meta({ description: 'Rungs that cannot meet both conditions.' }),
   with: idField('a constraint id').optional().meta({ description: 'The other condition.' }),
@@ -39,6 +32,15 @@ export const constraintSheet = z
       .optional()
       .meta({ description: 'From the statement to the local form, in two or three lines.' }),
     force: z.enum(forces).meta({ description: 'What a local violation means for the statement.' }),
+    'force-for': z
+      .strictObject({
+        lda: z.enum(forces).optional(),
+        gga: z.enum(forces).optional(),
+        'meta-gga': z.enum(forces).optional(),
+        hybrid: z.enum(forces).optional(),
+      })
+      .optional()
+      .meta({ description: 'Force for one rung, or for functionals with exact exchange, where it differs.' }),
     status: z.enum(statuses).meta({ description: 'How well the condition is established.' }),
     gate: z
       .enum(gateLevels)
@@ -69,7 +71,6 @@ export const constraintSheet = z
     relative: yesNoField().optional().meta({ description: 'For ==: compare relative to the right-hand side.' }),
     tolerance: nonNegativeField().meta({ description: 'Largest margin below zero that is still accepted.' }),
     'tolerance-reason': textField().optional().meta({ description: 'Why this tolerance.' }),
-    exclude: z.array(exclusion).optional().meta({ description: 'Points at which the condition is not asked.' }),
     'cannot-meet': z.array(conflict).optional().meta({ description: 'Conditions that a rung cannot meet together.' }),
     holds: z.array(idField('a functional id')).optional().meta({ description: 'Functionals known to hold it.' }),
     breaks: z.array(counterexample).optional().meta({ description: 'Functionals known to break it.' }),

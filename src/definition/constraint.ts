@@ -4,7 +4,6 @@ import type {
   Conflict,
   ConstrainedPart,
   ConstraintDefinition,
-  Exclusion,
   Force,
   GateLevel,
   KnownCase,
@@ -25,7 +24,6 @@ export type {
   ConstantChoice,
   ConstrainedPart,
   ConstraintDefinition,
-  Exclusion,
   Force,
   GateLevel,
   KnownCase,
@@ -63,6 +61,9 @@ function read(root: SheetNode, text: string, origin: SheetOrigin, requirement: S
     ...given('localForm', textOf(root, 'local-form')),
     ...given('derivation', textOf(root, 'derivation')),
     force: textOf(root, 'force') as Force,
+    forceFor: Object.fromEntries(
+      entriesOf(entryOf(root, 'force-for')?.node).map(({ key, node }) => [key, scalarOf(node)?.text as Force]),
+    ),
     status: textOf(root, 'status') as Status,
     ...given('gate', gate),
     sources: textsOf(root, 'sources'),
@@ -79,7 +80,6 @@ function read(root: SheetNode, text: string, origin: SheetOrigin, requirement: S
     relative: textOf(root, 'relative') === 'true',
     tolerance: decimalNumber(textOf(root, 'tolerance') ?? '0') ?? 0,
     ...given('toleranceReason', textOf(root, 'tolerance-reason')),
-    exclude: itemsOf(root, 'exclude').flatMap(exclusionOf),
     cannotMeet: itemsOf(root, 'cannot-meet').map(conflictOf),
     holds: itemsOf(root, 'holds').flatMap((item) =>
       item.kind === 'scalar' ? [{ id: item.value.text, place: item.place }] : [],
@@ -87,11 +87,6 @@ function read(root: SheetNode, text: string, origin: SheetOrigin, requirement: S
     breaks: itemsOf(root, 'breaks').map(counterexampleOf),
     traps: textsOf(root, 'traps'),
   };
-}
-
-function exclusionOf(item: SheetNode): readonly Exclusion[] {
-  const when = sourceOf(item, 'when');
-  return when === undefined ? [] : [{ when, reason: textOf(item, 'reason') ?? '' }];
 }
 
 function conflictOf(item: SheetNode): Conflict {

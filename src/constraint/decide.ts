@@ -1,0 +1,270 @@
+import type { DomainRecord, Finding, RegionRecord, Verdict, Witness } from '../finding/finding.ts';
+import type { Functional } from '../functional/functional.ts';
+import { Graph } from '../graph/graph.ts';
+import { evaluateDecimal } from '../kernel/decimal.ts';
+import { decimalContext } from '../number/decimal.ts';
+import { type Rational, toNumber } from '../number/rational.ts';
+import type { Interval } from '../search/cross.ts';
+import type { Condition } from './condition.ts';
+import { type ConfirmedMargin, makeConfirmer } from './confirm.ts';
+import { spinPlaceOf } from './coordinates.ts';
+import type { Domain } from './domain.ts';
+import { forceOf, gateOf, isRealistic } from './gate.ts';
+import type { Evidence, ViolatedRegion } from './look.ts';
+import { causeOfViolation } from './printed-digits.ts';
+import { regionWords } from './words.ts';
+
+export interface Settings {
+  readonly domain: Domain;
+  /** Values of the selectable constants. */
+  readonly constants: ReadonlyMap<string, Rational>;
+  /** Trial values for parameters of the functional. */
+  readonly parameters: ReadonlyMap<string, Rational>;
+}
+
+/** A margin must be known to so many digits before its sign is believed. */
+const sureDigits = 3;
+/** Minima that are tried in high precision before double-precision noise is blamed. */
+const minimaTried = 6;
+/** Above this share of points without a value nothing is said. */
+const mostWithoutValue = 0.05;
+
+/** Evidence in double precision and confirmation in high precision make a finding. */
+export function decide(
+  condition: Condition,
+  functional: Functional,
+  settings: Settings,
+  evidence: Evidence,
+  fixed: ReadonlyMap<string, number>,
+): Finding {
+  const { definition } = condition;
+  const confirmer = makeConfirmer(condition, functional, settings);
+  const pointOf = (place: Float64Array) =>
+    Object.fromEntries(evidence.axes.map(({ name }, index) => [name, place[index] as number]));
+  const candidates = [...evidence.minima.slice(0, minimaTried)];
+  if (evidence.firstWithoutValue !== undefined)
+    candidates.push({ place: evidence.firstWithoutValue, value: Number.NaN });
+  const { verdict, place, confirmed, reason } = judge(candidates, evidence, definition.tolerance, (at) =>
+    confirmer.at(pointOf(at)),
+  );
+  const violated = verdict === 'violated';
+  const witness = place === undefined ? null : witnessAt(condition, pointOf(place), fixed);
+  const realistic = witness !== null && isRealistic(witness);
+  const { gate, reason: gateReason } = gateOf(definition, functional, verdict, realistic);
+  const margin = confirmed?.value.toNumber() ?? evidence.minima[0]?.value;
+  return {
+    ...heading(condition, functional, settings),
+    verdict,
+    gate,
+    gateReason,
+    margin: margin === undefined || !Number.isFinite(margin) ? null : margin,
+    confirmed: confirmed?.value.isFinite()
+      ? confirmed.value.toSignificantDigits(Math.max(1, Math.min(30, confirmed.digits))).toString()
+      : null,
+    confirmedDigits: confirmed?.value.isFinite() ? confirmed.digits : 0,
+    witness,
+    irrelevant: irrelevantCoordinates(condition, evidence, fixed),
+    violatedShare: violated ? evidence.violatedShare : 0,
+    regions: violated ? evidence.regions.map(regionRecord) : [],
+    moreRegions: violated ? evidence.moreRegions : 0,
+    through: violated && place !== undefined ? throughRecord(evidence, place) : [],
+    cause: violated && place !== undefined ? causeOfViolation(condition, functional, settings, pointOf(place)) : null,
+    points: evidence.points,
+    withoutValue: evidence.withoutValue,
+    domain: domainRecord(condition, settings.domain, evidence, fixed),
+    reason,
+  };
+}
+
+interface Judgement {
+  readonly verdict: Verdict;
+  readonly place: Float64Array | undefined;
+  readonly confirmed: ConfirmedMargin | undefined;
+  readonly reason: string;
+}
+
+function judge(
+  candidates: readonly { readonly place: Float64Array; readonly value: number }[],
+  evidence: Evidence,
+  tolerance: number,
+  confirm: (place: Float64Array) => ConfirmedMargin,
+): Judgement {
+  const { points, withoutValue } = evidence;
+  const looked =
+    evidence.axes.length === 0
+      ? 'it depends on no coordinate of the domain: one value decides it'
+      : `no violation at ${points.toLocaleString('en')} points and the local minima among them; not a proof`;
+  let roundOff: { value: number; exact: ConfirmedMargin } | undefined;
+  let first: { place: Float64Array; confirmed: ConfirmedMargin } | undefined;
+  for (const { place, value } of candidates) {
+    // Once a point without suspicion is reached, the rest are higher still.
+    if (first !== undefined && value >= -tolerance) continue;
+    const confirmed = confirm(place);
+    if (!confirmed.value.isFinite()) continue;
+    first ??= { place, confirmed };
+    const isBelow = confirmed.value.lessThan(-tolerance);
+    const isResolved = confirmed.digits >= sureDigits || confirmed.value.abs().lessThanOrEqualTo(tolerance);
+    if (isBelow && isResolved) {
+      return {
+        verdict: 'violated',
+        place,
+        confirmed,
+        reason: `confirmed to ${confirmed.digits} digits at the witness`,
+      };
+    }
+    if (!isResolved) {
+      return {
+        verdict: 'undecided',
+        place,
+        confirmed,
+        reason: `the margin at the lowest point could not be resolved: only ${confirmed.digits} digits of it are sure`,
+      };
+    }
+    if (value < -tolerance) roundOff ??= { value, exact: confirmed };
+  }
+  if (first === undefined) {
+    return {
+      verdict: 'undecided',
+      place: undefined,
+      confirmed: undefined,
+      reason: 'no point of the domain has a value',
+    };
+  }
+  if (withoutValue > mostWithoutValue * points) {
+    return {
+      verdict: 'undecided',
+      place: first.place,
+      confirmed: first.confirmed,
+      reason: `${withoutValue.toLocaleString('en')} of ${points.toLocaleString('en')} points have no value`,
+    };
+  }
+  const cleared =
+    roundOff === undefined
+      ? ''
+      : `; double precision shows ${roundOff.value.toPrecision(2)}, which high precision clears as round-off`;
+  const excluded =
+    withoutValue === 0
+      ? ''
+      : `; ${withoutValue.toLocaleString('en')} points without a value are left out${placeText(evidence)}`;
+  return {
+    verdict: 'holds',
+    place: first.place,
+    confirmed: first.confirmed,
+    reason: `${looked}${cleared}${excluded}`,
+  };
+}
+
+function placeText({ firstWithoutValue, axes }: Evidence): string {
+  if (firstWithoutValue === undefined) return '';
+  const place = axes.map(({ name }, index) => `${name} ${Number((firstWithoutValue[index] as number).toPrecision(4))}`);
+  return ` (the first at ${place.join(', ')})`;
+}
+
+function regionRecord({ share, hull }: ViolatedRegion): RegionRecord {
+  const bounds = hull.map(({ axis, lower, upper, spans }) => ({ coordinate: axis, lower, upper, whole: spans }));
+  return { share, bounds, words: regionWords(hull) };
+}
+
+function throughRecord(evidence: Evidence, place: Float64Array): Finding['through'] {
+  // A point that only high precision gives a value to has no line of double-precision values through it.
+  if (!(evidence.at(place) < 0)) return [];
+  return evidence.through(place).map(({ lower, upper }: Interval, index) => ({
+    coordinate: evidence.axes[index]?.name as string,
+    lower: lower.value,
+    upper: upper.value,
+    lowerIsEdge: lower.kind === 'end',
+    upperIsEdge: upper.kind === 'end',
+  }));
+}
+
+/** A finding for a condition that does not apply. */
+export function notApplicableFinding(
+  condition: Condition,
+  functional: Functional,
+  settings: Settings,
+  reason: string,
+): Finding {
+  const { gate, reason: gateReason } = gateOf(condition.definition, functional, 'not-applicable', false);
+  return {
+    ...heading(condition, functional, settings),
+    verdict: 'not-applicable',
+    gate,
+    gateReason,
+    margin: null,
+    confirmed: null,
+    confirmedDigits: 0,
+    witness: null,
+    irrelevant: [],
+    violatedShare: null,
+    regions: [],
+    moreRegions: 0,
+    through: [],
+    cause: null,
+    points: 0,
+    withoutValue: 0,
+    domain: { name: settings.domain.name, space: condition.definition.space, coordinates: [], fixed: {} },
+    reason,
+  };
+}
+
+function heading({ definition }: Condition, functional: Functional, settings: Settings) {
+  return {
+    constraint: definition.id,
+    title: definition.title,
+    part: definition.part,
+    force: forceOf(definition, functional),
+    status: definition.status,
+    requirement: definition.localForm ?? definition.requirement.text,
+    tolerance: definition.tolerance,
+    relative: definition.relative,
+    constants: Object.fromEntries(
+      definition.constants.map(({ constant }) => [constant, toNumber(settings.constants.get(constant) as Rational)]),
+    ),
+  };
+}
+
+/** Values of the coordinates that a condition does not depend on, for a witness that can be evaluated. */
+const neutral = { rs: 1, zeta: 0, s: 0, alpha: 1 };
+
+function witnessAt(
+  condition: Condition,
+  point: Readonly<Record<string, number>>,
+  fixed: ReadonlyMap<string, number>,
+): Witness {
+  if (condition.definition.space === 'slice') return { ...neutral, ...Object.fromEntries(fixed), ...point };
+  const graph = new Graph();
+  const place = spinPlaceOf(graph);
+  const context = decimalContext(30);
+  const all = { ...neutral, s_up: 0, s_dn: 0, cosine: 1, alpha_up: 1, alpha_dn: 1, ...point };
+  const bindings = new Map(Object.entries(all).map(([name, value]) => [name, context.from(value)]));
+  const [s, alpha] = evaluateDecimal(graph, [place.total('s'), place.total('alpha')], bindings, 30).map((value) =>
+    value.toNumber(),
+  ) as [number, number];
+  return { ...all, s, alpha };
+}
+
+function irrelevantCoordinates(condition: Condition, evidence: Evidence, fixed: ReadonlyMap<string, number>): string[] {
+  if (condition.definition.space === 'spin') return [];
+  const named = new Set([...evidence.axes.map(({ name }) => name), ...fixed.keys()]);
+  return Object.keys(neutral).filter((name) => !named.has(name));
+}
+
+function domainRecord(
+  condition: Condition,
+  domain: Domain,
+  evidence: Evidence,
+  fixed: ReadonlyMap<string, number>,
+): DomainRecord {
+  return {
+    name: domain.name,
+    space: condition.definition.space,
+    coordinates: evidence.axes.map(({ name, lower, upper, scale }, index) => ({
+      name,
+      lower,
+      upper: Number.isFinite(upper) ? upper : null,
+      points: evidence.counts[index] ?? 0,
+      scale,
+    })),
+    fixed: Object.fromEntries(fixed),
+  };
+}

@@ -1,0 +1,39 @@
+import type { Extent } from '../search/region.ts';
+
+const symbols: Readonly<Record<string, string>> = {
+  rs: 'r_s',
+  zeta: 'ζ',
+  s: 's',
+  alpha: 'α',
+  q: 'q',
+  s_up: 's↑',
+  s_dn: 's↓',
+  cosine: 'cos θ',
+  alpha_up: 'α↑',
+  alpha_dn: 'α↓',
+};
+
+/** A region as a person would say it: `1.96 ≤ s ≤ 2.28, r_s ≤ 1.2, every ζ`; ends to three digits. */
+export function regionWords(hull: readonly Extent[]): string {
+  const limited: string[] = [];
+  const whole: string[] = [];
+  for (const { axis, lower, upper, touchesLower, touchesUpper, spans } of hull) {
+    const symbol = symbols[axis] ?? axis;
+    if (spans) whole.push(symbol);
+    else if (lower === upper) limited.push(`${symbol} = ${short(lower)}`);
+    else if (touchesUpper) limited.push(`${symbol} ≥ ${short(lower)}`);
+    else if (touchesLower) limited.push(`${symbol} ${upperRelation(upper)} ${short(upper)}`);
+    else limited.push(`${short(lower)} ≤ ${symbol} ${upperRelation(upper)} ${short(upper)}`);
+  }
+  const every = whole.length === 0 ? [] : [`every ${whole.join(', ')}`];
+  return [...limited, ...every].join(', ');
+}
+
+/** A region that ends just short of a round value ends before it: `ζ < 1`, not `ζ ≤ 1`. */
+function upperRelation(upper: number): '<' | '≤' {
+  return Number(short(upper)) > upper ? '<' : '≤';
+}
+
+function short(value: number): string {
+  return String(Number(value.toPrecision(3)));
+}

@@ -1,0 +1,37 @@
+import type { Parameters } from './evaluate.ts';
+import type { PartName } from './values.ts';
+
+/** A published constant from which the reference library differs. */
+export interface PublishedDifference {
+  readonly functional: string;
+  readonly part: PartName;
+  readonly constant: string;
+  /** The library's values of the sheet's parameters; with them every value must agree to the usual tolerance. */
+  readonly library: Parameters;
+  /** The largest relative change of the energy per particle at the general points, to two digits. */
+  readonly size: number;
+}
+
+export const publishedDifferences: readonly PublishedDifference[] = [
+  {
+    functional: 'chachiyo',
+    part: 'correlation',
+    constant: 'the closed forms of a, (log 2 − 1)/(2π²) and half of it, against eight and seven printed digits',
+    library: { a0: '-0.01554535', a1: '-0.007772675' },
+    size: 2.9e-7,
+  },
+  {
+    functional: 'pw91',
+    part: 'correlation',
+    constant: 'the term 10⁴·7.389·10⁻⁶ r_s³ in the denominator of C_xc(r_s), as in P86, against none',
+    library: { Cxc5: '0' },
+    size: 8.2e-5,
+  },
+  {
+    functional: 'q2d',
+    part: 'correlation',
+    constant: 'r_s of the two-dimensional gas 1.704 r_s √s, against 2^(−1/6) (4π/3)^(1/3) times as much',
+    library: { r2d: '2.4471511475878263' },
+    size: 8.3e-2,
+  },
+];

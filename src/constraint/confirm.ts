@@ -8,10 +8,10 @@ import { limitInHighPrecision } from './limit.ts';
 import { buildMargin, type Margin } from './margin.ts';
 
 /** Working digits of a confirmation. */
-export const confirmationDigits = 50;
+export const confirmationDigits = 40;
 /** Where two evaluations disagree, up to so many working digits are tried. */
-const mostDigits = 90;
-const zeroBelow = '1e-40';
+const mostDigits = 80;
+const zeroBelow = '1e-30';
 
 /** A margin in high precision: its value and how many of its digits are sure. */
 export interface ConfirmedMargin {

@@ -94,4 +94,4 @@ export const pinnedValues: Readonly<Record<string, readonly number[]>> = {
 };
 
 /** Points of the general spin space that are looked at. */
-export const sampledPoints = 200_000;
+export const sampledPoints = 100_000;

@@ -1,5 +1,5 @@
 import type { Graph, NodeId } from '../graph/graph.ts';
-import { compileKernel, type Kernel } from '../kernel/float64.ts';
+import { compileKernel, compilePoint, type Kernel } from '../kernel/float64.ts';
 import type { Axis } from '../search/axis.ts';
 import type { EvaluateBlock, PointFunction } from '../search/block.ts';
 import { crossings, type Interval } from '../search/cross.ts';
@@ -253,17 +253,14 @@ export function lookOnce(graph: Graph, node: NodeId): Evidence {
 }
 
 function pointFunction(graph: Graph, node: NodeId, axes: readonly Axis[]): PointFunction {
-  const variables = axes.length === 0 ? ['none'] : axes.map(({ name }) => name);
-  const kernel = compileKernel(graph, [node], [{ variables }]);
-  const columns = variables.map(() => new Float64Array(1));
-  const values = new Float64Array(1);
-  const out = [values];
-  const coordinates = [columns];
+  const value = compilePoint(
+    graph,
+    node,
+    axes.map(({ name }) => name),
+  );
   return (place) => {
-    for (let axis = 0; axis < place.length; axis++) (columns[axis] as Float64Array)[0] = place[axis] as number;
-    kernel.evaluate(coordinates, out);
-    dropInfinities(values);
-    return values[0] as number;
+    const margin = value(place);
+    return Number.isFinite(margin) ? margin : Number.NaN;
   };
 }
 

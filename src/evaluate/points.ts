@@ -9,6 +9,7 @@ import { evaluateDecimal } from '../kernel/decimal.ts';
 import { compileKernel } from '../kernel/float64.ts';
 import { type Decimal, decimalContext } from '../number/decimal.ts';
 import type { Rational } from '../number/rational.ts';
+import { limitAtEdge } from './edge.ts';
 import { type Energies, energiesAt } from './energies.ts';
 
 export const sliceColumns = ['rs', 'zeta', 's', 'alpha', 'q'] as const;
@@ -161,14 +162,10 @@ function evaluateDoubles(
     [...result].map((value, row) => {
       if (Number.isFinite(value)) return value;
       const point = points[row] as Readonly<Record<string, string>>;
-      const [exact] = evaluateDecimal(
-        graph,
-        [outputs[index] as NodeId],
-        bindingsOf(inputs, point, edgeDigits),
-        edgeDigits,
-      );
+      const node = outputs[index] as NodeId;
+      const [exact] = evaluateDecimal(graph, [node], bindingsOf(inputs, point, edgeDigits), edgeDigits);
       const retried = exact?.toNumber() ?? Number.NaN;
-      return Number.isFinite(retried) ? retried : null;
+      return Number.isFinite(retried) ? retried : (limitAtEdge(graph, node, point) ?? null);
     }),
   );
 }

@@ -7,7 +7,7 @@ import { checkReading } from './check-reading.ts';
 import { type DefinitionKey, expansionOf, findCircle, keyOfSite, namedDefinitions } from './dependencies.ts';
 import type { Functional } from './functional.ts';
 import { isAbove, quantityOf } from './quantities.ts';
-import type { Reading } from './reading.ts';
+import type { Reading, Site } from './reading.ts';
 
 /** A formula that expands to more calls than this is refused before it is built. */
 const largestExpansion = 100_000;
@@ -33,7 +33,7 @@ export function checkNames(functional: Functional, readings: readonly Reading[],
   const circle = findCircle(new Map([...edges].map(([key, named]) => [key, named.keys()])));
   if (circle !== undefined) problems.push(circleProblem(circle, readings));
 
-  const perChannel = circle === undefined ? channelSteps(readings, edges) : new Set<DefinitionKey>();
+  const perChannel = circle === undefined ? channelSteps(readings, defined) : new Set<DefinitionKey>();
   for (const reading of readings) problems.push(...checkReading(functional, reading, defined, perChannel));
   if (circle === undefined) problems.push(...expansionProblems(readings, defined));
   problems.push(...fromProblems(functional));
@@ -85,33 +85,28 @@ function circleProblem(circle: readonly DefinitionKey[], readings: readonly Read
   });
 }
 
-/** The steps that speak of one channel (`x_sigma`), themselves or through other steps. */
-function channelSteps(
-  readings: readonly Reading[],
-  edges: ReadonlyMap<DefinitionKey, ReadonlyMap<DefinitionKey, number>>,
-): Set<DefinitionKey> {
+/** The steps that speak of one channel (`x_sigma`) outside `spinsum`, themselves or through other steps. */
+function channelSteps(readings: readonly Reading[], defined: ReadonlySet<DefinitionKey>): Set<DefinitionKey> {
   const perChannel = new Set<DefinitionKey>();
-  let size = -1;
   const steps = readings.filter(({ site }) => site.kind === 'step');
+  let size = -1;
   while (size !== perChannel.size) {
     size = perChannel.size;
     for (const { expression, site } of steps) {
-      const key = keyOfSite(site) as DefinitionKey;
-      const inherited = [...(edges.get(key)?.keys() ?? [])].some((named) => perChannel.has(named));
-      if (inherited || namesChannel(expression)) perChannel.add(key);
+      if (speaksOfChannel(expression, site)) perChannel.add(keyOfSite(site) as DefinitionKey);
     }
   }
   return perChannel;
-}
 
-/** Steps that reach a channel step only inside `spinsum` are taken for channel steps too; they then say so by name. */
-function namesChannel(expression: Expression): boolean {
-  if (expression.kind === 'call' && expression.name === 'spinsum') return false;
-  if (expression.kind === 'name') {
-    const quantity = quantityOf(expression.name);
-    return quantity?.scope === 'channel' && (quantity.suffix === 'sigma' || quantity.suffix === 'other');
+  function speaksOfChannel(expression: Expression, site: Site): boolean {
+    if (expression.kind === 'call' && expression.name === 'spinsum') return false;
+    if (expression.kind === 'name') {
+      const quantity = quantityOf(expression.name);
+      if (quantity?.scope === 'channel') return quantity.suffix === 'sigma' || quantity.suffix === 'other';
+      return [...namedDefinitions(expression, site, defined).keys()].some((key) => perChannel.has(key));
+    }
+    return childrenOf(expression).some((child) => speaksOfChannel(child, site));
   }
-  return childrenOf(expression).some(namesChannel);
 }
 
 function expansionProblems(readings: readonly Reading[], defined: ReadonlySet<DefinitionKey>): Problem[] {

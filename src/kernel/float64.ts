@@ -42,8 +42,7 @@ export function compileKernel(
 ): Kernel {
   const plan = planKernel(graph, outputs, axes, lengths);
   const generated = generate(plan);
-  allowLargeFunctions();
-  const compiled = new Function('values', 'out', 'tables', 'erf', 'lambertW', generated.source) as Compiled;
+  const compiled = compile(generated.source);
   return {
     source: generated.source,
     loopOrder: plan.order,
@@ -56,6 +55,34 @@ export function compileKernel(
       compiled(values, out, allocateTables(generated, actual), erf, lambertW);
     },
   };
+}
+
+/**
+ * One output as a function of a point, for searches that ask for one value at a time; the point has one value per
+ * variable, in their order. The function keeps its own buffers, so it is not re-entrant.
+ */
+export function compilePoint(
+  graph: Graph,
+  output: NodeId,
+  variables: readonly string[],
+): (point: Float64Array) => number {
+  // A kernel needs one variable at least; a constant output reads none.
+  const plan = planKernel(graph, [output], [{ variables: variables.length === 0 ? ['unused'] : variables }]);
+  const compiled = compile(generate(plan).source);
+  const columns = (variables.length === 0 ? ['unused'] : variables).map(() => new Float64Array(1));
+  const values = [columns];
+  const result = new Float64Array(1);
+  const out = [result];
+  return (point) => {
+    for (let index = 0; index < point.length; index++) (columns[index] as Float64Array)[0] = point[index] as number;
+    compiled(values, out, [], erf, lambertW);
+    return result[0] as number;
+  };
+}
+
+function compile(source: string): Compiled {
+  allowLargeFunctions();
+  return new Function('values', 'out', 'tables', 'erf', 'lambertW', source) as Compiled;
 }
 
 function allocateTables({ tables }: Generated, lengths: readonly number[]): Float64Array[] {

@@ -1,6 +1,7 @@
 import { differentiate } from '../../../src/derivative/differentiate.ts';
+import type { Expression } from '../../../src/expression/expression.ts';
 import type { Instance, PartEnergy } from '../../../src/functional/frame.ts';
-import type { Functional } from '../../../src/functional/functional.ts';
+import type { Functional, Parameter } from '../../../src/functional/functional.ts';
 import { instantiate } from '../../../src/functional/instance.ts';
 import {
   type DensityInputs,
@@ -9,11 +10,12 @@ import {
   type SliceCoordinates,
   slicePlace,
 } from '../../../src/functional/place.ts';
-import { add, decimal, mul, variable } from '../../../src/graph/build.ts';
+import { add, mul, variable } from '../../../src/graph/build.ts';
 import { Graph, type NodeId } from '../../../src/graph/graph.ts';
 import { evaluateDecimal } from '../../../src/kernel/decimal.ts';
 import { compileKernel } from '../../../src/kernel/float64.ts';
 import { Decimal } from '../../../src/number/decimal.ts';
+import { parseDecimal } from '../../../src/number/rational.ts';
 import type { PartName, Points } from './values.ts';
 
 /** Values of one part at points: in double precision at all of them, in high precision at one. */
@@ -23,7 +25,7 @@ export interface Evaluated {
   highPrecision(point: number): number[];
 }
 
-/** New values of parameters of the sheet, as decimal text. */
+/** New values of parameters as decimal text, by name; `pbe.kappa` is kappa of pbe where the sheet uses it. */
 export type Parameters = Readonly<Record<string, string>>;
 
 /** Energy per particle, then the derivative of the energy per volume with respect to each column. */
@@ -67,10 +69,44 @@ function energyOf(instance: Instance, name: PartName, place: Place): PartEnergy 
 }
 
 function instanceOf(graph: Graph, functional: Functional, changed: Parameters): Instance {
-  const unknown = Object.keys(changed).find((name) => !functional.parameters.has(name));
-  if (unknown !== undefined) throw new RangeError(`${functional.definition.id} has no parameter ${unknown}`);
-  const parameters = Object.entries(changed).map(([name, text]): [string, NodeId] => [name, decimal(graph, text)]);
-  return instantiate(graph, functional, { parameters: new Map(parameters) });
+  const unused = new Set(Object.keys(changed));
+  const altered = withParameters(functional, changed, unused);
+  if (unused.size > 0) throw new RangeError(`${functional.definition.id} has no parameter ${[...unused].join(', ')}`);
+  return instantiate(graph, altered);
+}
+
+/** The functional with new values, of its own parameters (`kappa`) and of those of the sheets it uses (`pbe.kappa`). */
+function withParameters(functional: Functional, changed: Parameters, unused: Set<string>): Functional {
+  const own = Object.entries(changed).filter(([key]) => functional.parameters.has(key));
+  const imports = [...functional.imports].map(([alias, { functional: imported, parameters }]) => {
+    const prefix = `${imported.definition.id}.`;
+    const direct = Object.entries(changed).filter(
+      ([key]) => key.startsWith(prefix) && imported.parameters.has(key.slice(prefix.length)),
+    );
+    for (const [key] of direct) unused.delete(key);
+    const replaced = direct.map(([key, text]) => [key.slice(prefix.length), numberOf(text)] as const);
+    const deeper = Object.fromEntries(Object.entries(changed).filter(([key]) => key.includes('.')));
+    return [
+      alias,
+      {
+        functional: withParameters(imported, deeper, unused),
+        parameters: new Map([...parameters, ...replaced]),
+      },
+    ] as const;
+  });
+  for (const [key] of own) unused.delete(key);
+  const parameters = new Map(functional.parameters);
+  for (const [name, text] of own) {
+    const { definition } = functional.parameters.get(name) as Parameter;
+    parameters.set(name, { definition, value: numberOf(text) });
+  }
+  return { ...functional, imports: new Map(imports), parameters };
+}
+
+function numberOf(text: string): Expression {
+  const value = parseDecimal(text);
+  if (value === undefined) throw new RangeError(`not a decimal: ${text}`);
+  return { kind: 'number', value, offset: 0 };
 }
 
 function inputs<Inputs>(graph: Graph, columns: readonly string[]): Inputs {

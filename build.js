@@ -1,0 +1,71 @@
+import { spawnSync } from 'node:child_process';
+import { existsSync, mkdirSync, rmSync } from 'node:fs';
+import { createRequire } from 'node:module';
+import { dirname, join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { build } from 'esbuild';
+
+process.chdir(dirname(fileURLToPath(import.meta.url)));
+
+// What is left of an earlier build must not be found by a later one.
+for (const path of ['dist/cli.js', 'dist/index.js', 'dist/parts', 'dist/types'])
+  rmSync(path, { recursive: true, force: true });
+mkdirSync('dist', { recursive: true });
+
+const library = existsSync('src/index.ts');
+
+// Of zod's messages only the English ones are wanted; the others are a third of the bundle.
+const englishOnly = {
+  name: 'english-only',
+  setup(bundle) {
+    bundle.onLoad({ filter: /zod[/\\]v4[/\\]locales[/\\]index\.js$/ }, () => ({
+      contents: "export { default as en } from './en.js';",
+      loader: 'js',
+    }));
+  },
+};
+
+// The commands are loaded when asked for (dynamic imports become files of their own), so that --version and --help
+// need not load the engine. Packages in CommonJS form may ask for built-in modules, hence the banner.
+await build({
+  entryPoints: { cli: 'src/cli/main.ts', ...(library ? { index: 'src/index.ts' } : {}) },
+  outdir: 'dist',
+  chunkNames: 'parts/[name]-[hash]',
+  bundle: true,
+  splitting: true,
+  platform: 'node',
+  format: 'esm',
+  target: 'node20',
+  minifySyntax: true,
+  legalComments: 'linked',
+  banner: {
+    js: "import { createRequire as makeRequire } from 'node:module'; const require = makeRequire(import.meta.url);",
+  },
+  plugins: [englishOnly],
+  logLevel: 'warning',
+});
+
+if (library) emitTypes();
+
+function emitTypes() {
+  const compiler = join(dirname(createRequire(import.meta.url).resolve('typescript/package.json')), 'bin', 'tsc');
+  const options = ['--noEmit', 'false', '--emitDeclarationOnly', '--declaration', '--outDir', 'dist/types'];
+  const fixed = ['--rootDir', 'src', '--target', 'es2023', '--module', 'nodenext', '--moduleResolution', 'nodenext'];
+  const flags = [
+    '--strict',
+    '--skipLibCheck',
+    '--allowImportingTsExtensions',
+    '--rewriteRelativeImportExtensions',
+    '--verbatimModuleSyntax',
+  ];
+  const entry = ['--types', 'node', 'src/index.ts'];
+  const { status, error } = spawnSync(
+    process.execPath,
+    [compiler, '--ignoreConfig', ...fixed, ...flags, ...options, ...entry],
+    {
+      stdio: 'inherit',
+    },
+  );
+  if (error !== undefined) throw error;
+  if (status !== 0) process.exit(status ?? 1);
+}

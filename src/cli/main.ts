@@ -1,0 +1,16 @@
+import { runProgram } from './program.ts';
+import { processTerminal } from './terminal.ts';
+
+// A reader that has seen enough (head, less) closes the pipe; that is no fault.
+for (const stream of [process.stdout, process.stderr]) {
+  stream.on('error', (error: NodeJS.ErrnoException) => {
+    if (error.code !== 'EPIPE') throw error;
+    process.exit();
+  });
+}
+
+process.exitCode = await runProgram(
+  process.argv.slice(2),
+  processTerminal(),
+  (process.env.RUNGCHECK_TRACE ?? '') !== '',
+);

@@ -1,0 +1,60 @@
+import { randomBytes } from 'node:crypto';
+import { realpathSync, renameSync, rmSync, statSync, writeFileSync } from 'node:fs';
+import { ProblemError } from '../errors/problem.ts';
+
+/**
+ * Writes a file whole or not at all: under a temporary name beside it, then renamed. A target that is no regular file
+ * (a device, a pipe) is written to directly. Throws a ProblemError when it cannot be written.
+ */
+export function writeOutputFile(path: string, text: string): void {
+  try {
+    const existing = statSync(path, { throwIfNoEntry: false });
+    if (existing !== undefined && !existing.isFile()) {
+      writeFileSync(path, text);
+      return;
+    }
+    const target = existing === undefined ? path : realpathSync(path);
+    const temporary = `${target}.${randomBytes(6).toString('hex')}.tmp`;
+    try {
+      writeFileSync(temporary, text, { flag: 'wx', mode: existing?.mode ?? 0o666 });
+      renameSync(temporary, target);
+    } catch (error) {
+      rmSync(temporary, { force: true });
+      throw error;
+    }
+  } catch (error) {
+    throw unwritable(path, error);
+  }
+}
+
+/** Writes a new file; a ProblemError when there is one of that name already. */
+export function writeNewFile(path: string, text: string): void {
+  try {
+    writeFileSync(path, text, { flag: 'wx' });
+  } catch (error) {
+    throw unwritable(path, error);
+  }
+}
+
+function unwritable(path: string, error: unknown): unknown {
+  const code = (error as NodeJS.ErrnoException).code;
+  if (code === undefined) return error;
+  const remedy =
+    code === 'EEXIST' ? 'Choose another id, or remove the file first.' : 'Check the path and its permissions.';
+  return new ProblemError([
+    { code: 'output-unwritable', file: path, message: `cannot write the file: ${fileFaults[code] ?? code}`, remedy },
+  ]);
+}
+
+/** What the operating system's answers mean. */
+export const fileFaults: Readonly<Record<string, string>> = {
+  EEXIST: 'it exists already',
+  ENOENT: 'it does not exist, or its folder does not',
+  EACCES: 'permission denied',
+  EPERM: 'permission denied',
+  EROFS: 'the file system is read-only',
+  EISDIR: 'it is a folder',
+  ENOTDIR: 'a part of the path is not a folder',
+  ENOSPC: 'no space left',
+  ENAMETOOLONG: 'the name is too long',
+};

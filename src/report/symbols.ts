@@ -1,0 +1,47 @@
+const coordinateSymbols: Readonly<Record<string, string>> = {
+  rs: 'r_s',
+  zeta: 'ζ',
+  s: 's',
+  alpha: 'α',
+  q: 'q',
+  s_up: 's↑',
+  s_dn: 's↓',
+  cosine: 'cos θ',
+  alpha_up: 'α↑',
+  alpha_dn: 'α↓',
+  n_up: 'n↑',
+  n_dn: 'n↓',
+  sigma_uu: 'σ↑↑',
+  sigma_ud: 'σ↑↓',
+  sigma_dd: 'σ↓↓',
+  tau_up: 'τ↑',
+  tau_dn: 'τ↓',
+  lapl_up: '∇²n↑',
+  lapl_dn: '∇²n↓',
+};
+
+const answerSymbols: Readonly<Record<string, string>> = {
+  eps_x: 'ε_x',
+  eps_c: 'ε_c',
+  eps_xc: 'ε_xc',
+  Fx: 'F_x',
+  Fc: 'F_c',
+  Fxc: 'F_xc',
+  dFx_drs: '∂F_x/∂r_s',
+  dFc_drs: '∂F_c/∂r_s',
+  d2Fc_drs2: '∂²F_c/∂r_s²',
+  dFxc_drs: '∂F_xc/∂r_s',
+};
+
+/** The field's symbol of a coordinate; the name itself where there is none. */
+export function coordinateSymbol(name: string): string {
+  return coordinateSymbols[name] ?? name;
+}
+
+/** The field's symbol of an answer of `at`: ε_x, F_c, ∂F_c/∂r_s, ∂e_x/∂n↑ (e: energy per volume) …. */
+export function answerSymbol(name: string): string {
+  const derivative = /^d_(.+?)(?:_(x|c))?$/.exec(name);
+  if (derivative === null) return answerSymbols[name] ?? name;
+  const [, input = '', part = 'xc'] = derivative;
+  return `∂e_${part}/∂${coordinateSymbol(input)}`;
+}

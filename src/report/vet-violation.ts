@@ -1,0 +1,90 @@
+import type { Finding, FunctionalFindings } from '../finding/finding.ts';
+import { bound, labelled, wrap } from './layout.ts';
+import { leadingDigits, percentText, roundTripText, shortText } from './number-text.ts';
+import type { Paint } from './paint.ts';
+import { coordinateSymbol } from './symbols.ts';
+import {
+  commonDomain,
+  forceWords,
+  fullPlace,
+  gateWords,
+  knownCoordinates,
+  ownDomainWords,
+  statusWords,
+  verdictStyle,
+} from './words.ts';
+
+const labelWidth = 11;
+/** Digits of a confirmed margin that are shown; the findings file has them all. */
+const shownDigits = 20;
+
+/**
+ * The paragraph of a violated condition, behind a rail in the colour of its gate: what is required, by how much it is
+ * missed, the witness with all digits, the region in words, and what the violation counts as.
+ */
+export function violationLines(
+  finding: Finding,
+  functional: FunctionalFindings,
+  width: number,
+  paint: Paint,
+): string[] {
+  const room = width - 2;
+  const own = ownDomainWords(finding, commonDomain(functional));
+  const body = [
+    ...labelled('requires', `${finding.requirement}, to within ${toleranceText(finding)}`, labelWidth, room),
+    ...labelled('margin', marginWords(finding), labelWidth, room),
+    ...labelled('worst at', fullPlace(finding, knownCoordinates(functional)), labelWidth, room),
+    ...labelled('where', regionWords(finding), labelWidth, room),
+    ...labelled('boundary', crossingWords(finding), labelWidth, room),
+    ...labelled('looked at', own, labelWidth, room),
+    ...labelled('cause', causeWords(finding), labelWidth, room),
+    ...labelled('status', `${finding.status}; the local form is ${forceWords[finding.force]}`, labelWidth, room),
+    ...labelled('counts as', `${countsAs(finding)}: ${finding.gateReason}`, labelWidth, room),
+  ];
+  const style = verdictStyle(finding.verdict, finding.gate);
+  const rail = paint(style, '┃');
+  const heading = wrap(`${finding.title} · ${finding.constraint}`, room).map((line) => paint('strong', line));
+  return [...heading, ...body].map((line) => `${rail} ${line}`);
+}
+
+function toleranceText({ tolerance, relative }: Finding): string {
+  return `${shortText(tolerance)}${relative ? ' relative' : ''}`;
+}
+
+function marginWords({ margin, confirmed, confirmedDigits }: Finding): string {
+  if (confirmed !== null && confirmedDigits > 0) {
+    const shown = leadingDigits(confirmed, Math.min(shownDigits, confirmedDigits));
+    return `${shown} (high precision, ${confirmedDigits} digits sure)`;
+  }
+  return margin === null ? 'not known' : `${roundTripText(margin)} (double precision, not confirmed)`;
+}
+
+function regionWords({ violatedShare, regions, moreRegions }: Finding): string {
+  const share = violatedShare === null ? '' : `${percentText(violatedShare)} of the domain`;
+  if (regions.length === 0) return share;
+  const named = regions.map((region) =>
+    regions.length + moreRegions === 1 ? region.words : `${region.words} (${percentText(region.share)})`,
+  );
+  const more = moreRegions === 0 ? '' : ` | and ${moreRegions} smaller ${moreRegions === 1 ? 'region' : 'regions'}`;
+  return `${share === '' ? '' : `${share}: `}${named.join(' | ')}${more}`;
+}
+
+/** Where the violation ends along each coordinate, going from the worst point. */
+function crossingWords({ through }: Finding): string {
+  const words = through.flatMap(({ coordinate, lower, upper, lowerIsEdge, upperIsEdge }) => {
+    const ends = [...(lowerIsEdge ? [] : [lower]), ...(upperIsEdge ? [] : [upper])];
+    const symbol = coordinateSymbol(coordinate);
+    return ends.length === 0 ? [] : [bound(`${symbol} = ${ends.map((end) => shortText(end, 6)).join(' and ')}`)];
+  });
+  if (words.length === 0) return '';
+  return `ends at ${words.join('; ')}${words.length === 1 ? '' : ', each with the other coordinates of the worst point'}`;
+}
+
+/** Said only of printed digits: that the formula is to blame goes without saying. */
+function causeWords({ cause }: Finding): string {
+  return cause?.kind === 'printed-digits' ? cause.text : '';
+}
+
+function countsAs({ gate }: Finding): string {
+  return gate === 'fail' ? 'a failure' : gate === 'score' ? 'a score' : `a ${gateWords[gate]}`;
+}

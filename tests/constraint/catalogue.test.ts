@@ -1,0 +1,35 @@
+import { describe, expect, test } from 'vitest';
+import { vetFunctional } from '../../src/constraint/vet.ts';
+import { conditionOf, functionalOf, shelf, standardSettings } from './catalogue.ts';
+
+/** Conditions that no functional of the shelf breaks: forms made to break them are in violations.test.ts. */
+const brokenOnlyByMadeForms = [
+  'correlation-spin-symmetry',
+  'exchange-coordinate-scaling',
+  'exchange-spin-scaling',
+  'exchange-non-positive',
+];
+
+describe('each condition says what the literature says of the functionals that its sheet names', () => {
+  for (const id of shelf.constraintIds()) {
+    const condition = conditionOf(id);
+    const verdictOf = (functional: string) =>
+      vetFunctional(functionalOf(functional), [condition], standardSettings).findings[0];
+
+    test(`${id}: names functionals that hold it and functionals that break it`, () => {
+      expect(condition.definition.holds.length).toBeGreaterThan(0);
+      if (!brokenOnlyByMadeForms.includes(id)) expect(condition.definition.breaks.length).toBeGreaterThan(0);
+    });
+
+    test.each(condition.definition.holds)(`${id}: $id holds it`, (known) => {
+      const finding = verdictOf(known.id);
+      expect(finding?.verdict, finding?.reason).toBe('holds');
+    });
+
+    test.each(condition.definition.breaks)(`${id}: $id breaks it`, (known) => {
+      const finding = verdictOf(known.id);
+      expect(finding?.verdict, finding?.reason).toBe('violated');
+      expect(finding?.confirmedDigits).toBeGreaterThanOrEqual(10);
+    });
+  }
+});

@@ -10,7 +10,6 @@ import {
   gateWords,
   knownCoordinates,
   ownDomainWords,
-  statusWords,
   verdictStyle,
 } from './words.ts';
 
@@ -77,7 +76,7 @@ function crossingWords({ through }: Finding): string {
     return ends.length === 0 ? [] : [bound(`${symbol} = ${ends.map((end) => shortText(end, 6)).join(' and ')}`)];
   });
   if (words.length === 0) return '';
-  return `ends at ${words.join('; ')}${words.length === 1 ? '' : ', each with the other coordinates of the worst point'}`;
+  return `${words.join('; ')}${words.length === 1 ? '' : ', each with the other coordinates of the worst point'}`;
 }
 
 /** Said only of printed digits: that the formula is to blame goes without saying. */

@@ -3,9 +3,9 @@ import type { PointFunction } from './block.ts';
 import type { AxisGrid } from './grid.ts';
 
 /** Where an interval ends: f rises to the level; the domain ends; or f has no value beyond. */
-export type EndKind = 'crossing' | 'end' | 'no-value';
+type EndKind = 'crossing' | 'end' | 'no-value';
 
-export interface IntervalEnd {
+interface IntervalEnd {
   /** The outermost value known to lie below the level. */
   readonly value: number;
   readonly kind: EndKind;

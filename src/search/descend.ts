@@ -16,7 +16,7 @@ export interface DescentOptions {
 }
 
 /** `converged`: steps of `unitTolerance` do not lead lower; `flat`: the value no longer changes before that. */
-export type DescentStop = 'converged' | 'flat' | 'budget';
+type DescentStop = 'converged' | 'flat' | 'budget';
 
 export interface Descent {
   readonly place: Float64Array;

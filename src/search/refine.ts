@@ -21,7 +21,7 @@ export interface RefineOptions {
   readonly keep?: number;
 }
 
-export interface RefinedRegion extends Region {
+interface RefinedRegion extends Region {
   /** Measured on a grid finer than that of the first scan. */
   readonly finer: boolean;
   /** It reaches beyond the box that was looked at: share and hull are lower bounds. */

@@ -22,7 +22,7 @@ export interface Tally {
 }
 
 /** Records of violated cells, one slot each, in the order they were met. */
-export interface ViolatedCells {
+interface ViolatedCells {
   length: number;
   readonly cell: Int32Array;
   readonly points: Float64Array;

@@ -7,6 +7,27 @@ import { build } from 'esbuild';
 
 process.chdir(dirname(fileURLToPath(import.meta.url)));
 
+// Scripts of the project's own: `node build.js bench` makes dist/bench.js.
+const scripts = { bench: 'tests/bench/grid.ts', verdicts: 'tests/verdicts/write.ts' };
+// Packages in CommonJS form may ask for built-in modules.
+const banner = {
+  js: "import { createRequire as makeRequire } from 'node:module'; const require = makeRequire(import.meta.url);",
+};
+const [script] = process.argv.slice(2);
+if (script !== undefined) {
+  await build({
+    entryPoints: { [script]: scripts[script] },
+    outdir: 'dist',
+    bundle: true,
+    platform: 'node',
+    format: 'esm',
+    target: 'node20',
+    banner,
+    logLevel: 'warning',
+  });
+  process.exit(0);
+}
+
 // What is left of an earlier build must not be found by a later one.
 for (const path of ['dist/cli.js', 'dist/index.js', 'dist/parts', 'dist/types'])
   rmSync(path, { recursive: true, force: true });
@@ -26,7 +47,7 @@ const englishOnly = {
 };
 
 // The commands are loaded when asked for (dynamic imports become files of their own), so that --version and --help
-// need not load the engine. Packages in CommonJS form may ask for built-in modules, hence the banner.
+// need not load the engine.
 await build({
   entryPoints: { cli: 'src/cli/main.ts', ...(library ? { index: 'src/index.ts' } : {}) },
   outdir: 'dist',

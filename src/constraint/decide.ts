@@ -26,7 +26,7 @@ export interface Settings {
 const sureDigits = 3;
 /** Minima that are tried in high precision before double-precision noise is blamed. */
 const minimaTried = 6;
-/** Above this share of points without a value nothing is said. */
+/** Where more than this share of the domain has no value, nothing is said. */
 const mostWithoutValue = 0.05;
 
 /** Evidence in double precision and confirmation in high precision make a finding. */
@@ -130,7 +130,7 @@ function judge(
       reason: 'no point of the domain has a value',
     };
   }
-  if (withoutValue > mostWithoutValue * points) {
+  if (evidence.withoutValueShare > mostWithoutValue) {
     return {
       verdict: 'undecided',
       place: first.place,

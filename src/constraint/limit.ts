@@ -14,10 +14,10 @@ export interface LimitSequence {
 
 /** For float64: r_s = 10⁸ … 2.6·10¹⁰; the part left out is of the order r_s^(−5/2). */
 export const limitInFloat64: LimitSequence = { start: rational(10n ** 8n), terms: 5 };
-/** Two sequences for high precision, whose difference bounds the error. */
+/** Two sequences for high precision, whose difference shows the error; early enough that a form like x³ log(1 + 1/x) keeps digits. */
 export const limitInHighPrecision: readonly [LimitSequence, LimitSequence] = [
-  { start: rational(10n ** 16n), terms: 6 },
-  { start: rational(10n ** 19n), terms: 5 },
+  { start: rational(10n ** 8n), terms: 8 },
+  { start: rational(10n ** 9n), terms: 7 },
 ];
 
 /**

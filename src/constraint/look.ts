@@ -24,6 +24,8 @@ export interface Evidence {
   readonly at: PointFunction;
   readonly points: number;
   readonly withoutValue: number;
+  /** The share of the domain that they stand for. */
+  readonly withoutValueShare: number;
   readonly firstWithoutValue: Float64Array | undefined;
   /** Local minima, lowest first. */
   readonly minima: readonly Spot[];
@@ -81,6 +83,7 @@ function gridEvidence(graph: Graph, node: NodeId, output: ScanOutput, grids: rea
     at,
     points: output.points,
     withoutValue: output.withoutValue,
+    withoutValueShare: output.withoutValue / output.points,
     firstWithoutValue: output.firstWithoutValue,
     minima: found.minima.map((spot) => tidied(at, spot, axes)),
     violatedShare: found.violatedShare,
@@ -162,6 +165,7 @@ class Sampling {
   #evenPoints = 0;
   #evenBelow = 0;
   #withoutValue = 0;
+  #evenWithoutValue = 0;
   #firstWithoutValue: Float64Array | undefined;
   #lowest: Spot[] = [];
   readonly #hull: { lower: number; upper: number }[];
@@ -180,6 +184,7 @@ class Sampling {
       this.#points++;
       if (!Number.isFinite(value)) {
         this.#withoutValue++;
+        if (even[point] === 1) this.#evenWithoutValue++;
         this.#firstWithoutValue ??= placeOf(point);
         continue;
       }
@@ -218,6 +223,7 @@ class Sampling {
       at,
       points: this.#points,
       withoutValue: this.#withoutValue,
+      withoutValueShare: this.#evenWithoutValue / Math.max(1, this.#evenPoints + this.#evenWithoutValue),
       firstWithoutValue: this.#firstWithoutValue,
       minima: descendFromMany(at, this.#lowest, axes, { budget: searchBudget, keep: minimaKept }).minima.map((spot) =>
         tidied(at, spot, axes),
@@ -242,6 +248,7 @@ export function lookOnce(graph: Graph, node: NodeId): Evidence {
     at,
     points: 1,
     withoutValue: hasValue ? 0 : 1,
+    withoutValueShare: hasValue ? 0 : 1,
     firstWithoutValue: hasValue ? undefined : place,
     minima: hasValue ? [{ place, value }] : [],
     violatedShare: 1,

@@ -50,14 +50,19 @@ export function missesGeneral(row: ReferenceRow, evaluated: Evaluated): string[]
   );
 }
 
-export function missesSlice(row: ReferenceRow, evaluated: Evaluated): string[] {
+/** `atAlphaZero` is an absolute tolerance of F at the points with α = 0. */
+export function missesSlice(row: ReferenceRow, evaluated: Evaluated, atAlphaZero = 0): string[] {
   return missesOf(
     evaluated,
     row.slice.map((values, point): Check[] => {
-      const rs = slicePoints.rows[point]?.[0] as number;
+      const [rs, , , alpha] = slicePoints.rows[point] as number[] as [number, number, number, number];
       const size = Math.abs(values.F) + energyFloor;
       return [
-        { what: 'F', expected: values.F, tolerance: energyTolerance * size },
+        {
+          what: 'F',
+          expected: values.F,
+          tolerance: Math.max(energyTolerance * size, alpha === 0 ? atAlphaZero : 0),
+        },
         {
           what: 'dF_drs',
           expected: values.dF_drs,

@@ -7,5 +7,5 @@ import type { PartName } from './values.ts';
  */
 export const sums: Readonly<Record<string, Partial<Record<PartName, Sum>>>> = {
   // K. Hui and J.-D. Chai, J. Chem. Phys. 144, 044114 (2016)
-  scan0: { exchange: [[0.75, 'scan', 'exchange']], correlation: [[1, 'scan', 'correlation']] },
+  scan0: { exchange: [[0.75, 'scan', 'exchange']] },
 };

@@ -5,11 +5,11 @@ import { parseDecimal } from '../number/rational.ts';
 import { gapsIn, type PointsReport, pointsCsv, pointsJson, pointsText } from '../report/points.ts';
 import { exactValues, findFunctional, openCatalogue, parameterProblems } from './engine.ts';
 import { readInputFile } from './input-file.ts';
-import { parseAssignments, parseDigits, wrongOption } from './options.ts';
-import { writeOutputFile } from './output-file.ts';
+import { parseAssignments, parseDigits } from './options.ts';
+import { outputProblems, writeOutputFile } from './output-file.ts';
 import { isInadmissible, limitProblems } from './point-limits.ts';
 import { type GivenPoints, parsePoints } from './points-file.ts';
-import { valueOr } from './problems.ts';
+import { valueOr, wrongOption } from './problems.ts';
 import { exitStatus } from './status.ts';
 import { plainWidth, type Terminal } from './terminal.ts';
 
@@ -20,9 +20,9 @@ export interface AtOptions {
   readonly alpha?: string;
   readonly q?: string;
   readonly points?: string;
-  readonly derivatives: boolean;
+  readonly derivatives?: boolean;
   readonly digits?: string;
-  readonly set: readonly string[];
+  readonly set?: readonly string[];
   readonly format: 'text' | 'csv' | 'json';
   readonly out?: string;
 }
@@ -30,8 +30,10 @@ export interface AtOptions {
 /** `rungcheck at`: energies and derivatives at points; answers the exit status. */
 export async function atCommand(sheet: string, options: AtOptions, terminal: Terminal): Promise<number> {
   const problems: Problem[] = [];
+  const { out, format } = options;
+  if (out !== undefined) problems.push(...outputProblems(out));
   const functional = valueOr(findFunctional(openCatalogue([]), sheet), undefined, problems);
-  const parameters = valueOr(parseAssignments('--set', options.set), new Map(), problems);
+  const parameters = valueOr(parseAssignments('--set', options.set ?? []), new Map(), problems);
   const digits = options.digits === undefined ? undefined : valueOr(parseDigits(options.digits), undefined, problems);
   const given = await givenPoints(options, terminal, problems);
   if (functional !== undefined) problems.push(...parameterProblems([functional], parameters.keys()));
@@ -41,7 +43,7 @@ export async function atCommand(sheet: string, options: AtOptions, terminal: Ter
   const answer = evaluatePoints(functional, {
     space: spaceOf(given),
     points: given.points,
-    derivatives: options.derivatives,
+    derivatives: options.derivatives === true,
     ...(digits === undefined ? {} : { digits }),
     parameters: exactValues(parameters),
   });
@@ -56,7 +58,6 @@ export async function atCommand(sheet: string, options: AtOptions, terminal: Ter
     absent,
     notes,
   };
-  const { out, format } = options;
   const look = { width: out === undefined ? terminal.width : plainWidth, colour: out === undefined && terminal.colour };
   const render = { csv: pointsCsv, json: pointsJson, text: (data: PointsReport) => pointsText(data, look) };
   const text = render[format](report);
@@ -155,10 +156,12 @@ function gapNotes(given: GivenPoints, answer: Pick<PointsReport, 'columns' | 'ro
   const gaps = answer.rows.flatMap((row, index) => (gapsIn(answer, row).length > 0 ? [index + 1] : []));
   if (gaps.length === 0) return [];
   const listed = `${gaps.slice(0, 10).join(', ')}${gaps.length > 10 ? ', …' : ''}`;
-  const laplacian = given.columns.some((name) => name === 'q' || name.startsWith('lapl_'))
-    ? ''
-    : '; a functional of the Laplacian needs q (or lapl_up, lapl_dn)';
-  return [`${gaps.length === 1 ? 'point' : 'points'} ${listed} without a finite value in some column${laplacian}`];
+  const isBare = !given.columns.some((name) => name === 'q' || name.startsWith('lapl_'));
+  // A functional of the Laplacian has no value anywhere without it.
+  const missesLaplacian =
+    isBare && gaps.length === answer.rows.length && answer.rows.every(([first]) => first === null);
+  const hint = missesLaplacian ? '; if it depends on the Laplacian, give q (or lapl_up, lapl_dn)' : '';
+  return [`${gaps.length === 1 ? 'point' : 'points'} ${listed} without a finite value in some column${hint}`];
 }
 
 function admissibilityNotes({ points }: GivenPoints): string[] {

@@ -7,10 +7,10 @@ import type { Terminal } from './terminal.ts';
 /** `rungcheck explain`: one condition, what it says and what a violation of it means. */
 export function explainCommand(
   id: string,
-  options: { readonly constraints: readonly string[] },
+  options: { readonly constraints?: readonly string[] },
   terminal: Terminal,
 ): number {
-  const definition = settle(openCatalogue(options.constraints).constraint(id));
+  const definition = settle(openCatalogue(options.constraints ?? []).constraint(id));
   terminal.writeOut(explanationText(explanationOf(definition), terminal));
   return exitStatus.fine;
 }

@@ -7,12 +7,12 @@ import type { Terminal } from './terminal.ts';
 
 export interface ListOptions {
   readonly format: 'table' | 'json';
-  readonly constraints: readonly string[];
+  readonly constraints?: readonly string[];
 }
 
 /** `rungcheck list`: what can be vetted, and against what. */
 export function listCommand(what: string, options: ListOptions, terminal: Terminal): number {
-  const shelf = openCatalogue(options.constraints);
+  const shelf = openCatalogue(options.constraints ?? []);
   if (what === 'functionals') {
     const found = settle(allOf(shelf.functionalIds().map((id) => shelf.functional(id)))).map(listedFunctional);
     terminal.writeOut(options.format === 'json' ? jsonText(found) : functionalList(found, terminal));

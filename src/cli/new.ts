@@ -2,8 +2,8 @@ import type { Rung } from '../definition/functional.ts';
 import { idPattern } from '../definition/names.ts';
 import { newSheet } from '../definition/template.ts';
 import { ProblemError } from '../errors/problem.ts';
-import { wrongOption } from './options.ts';
 import { writeNewFile } from './output-file.ts';
+import { wrongOption } from './problems.ts';
 import { exitStatus } from './status.ts';
 import type { Terminal } from './terminal.ts';
 

@@ -1,6 +1,7 @@
 import { failure, type Outcome, type Problem, success } from '../errors/problem.ts';
 import { suggestion } from '../errors/suggest.ts';
 import { parseDecimal, type Rational } from '../number/rational.ts';
+import { wrongOption } from './problems.ts';
 
 /** A value given on the command line: its exact value and the text as it was typed. */
 export interface GivenValue {
@@ -74,8 +75,4 @@ export function splitList(texts: readonly string[]): string[] {
     .flatMap((text) => text.split(','))
     .map((item) => item.trim())
     .filter((item) => item !== '');
-}
-
-export function wrongOption(message: string, remedy: string): Problem {
-  return { code: 'wrong-option', message, remedy };
 }

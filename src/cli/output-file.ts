@@ -1,6 +1,7 @@
 import { randomBytes } from 'node:crypto';
 import { realpathSync, renameSync, rmSync, statSync, writeFileSync } from 'node:fs';
-import { ProblemError } from '../errors/problem.ts';
+import { dirname } from 'node:path';
+import { type Problem, ProblemError } from '../errors/problem.ts';
 
 /**
  * Writes a file whole or not at all: under a temporary name beside it, then renamed. A target that is no regular file
@@ -27,6 +28,15 @@ export function writeOutputFile(path: string, text: string): void {
   }
 }
 
+/** What is seen to be wrong with a target before the work for it is done. */
+export function outputProblems(path: string): Problem[] {
+  const problem = (code: string): Problem[] => [unwritableProblem(path, code)];
+  if (statSync(path, { throwIfNoEntry: false })?.isDirectory() === true) return problem('EISDIR');
+  const folder = statSync(dirname(path), { throwIfNoEntry: false });
+  if (folder === undefined) return problem('ENOENT');
+  return folder.isDirectory() ? [] : problem('ENOTDIR');
+}
+
 /** Writes a new file; a ProblemError when there is one of that name already. */
 export function writeNewFile(path: string, text: string): void {
   try {
@@ -38,12 +48,14 @@ export function writeNewFile(path: string, text: string): void {
 
 function unwritable(path: string, error: unknown): unknown {
   const code = (error as NodeJS.ErrnoException).code;
-  if (code === undefined) return error;
+  return code === undefined ? error : new ProblemError([unwritableProblem(path, code)]);
+}
+
+function unwritableProblem(path: string, code: string): Problem {
   const remedy =
     code === 'EEXIST' ? 'Choose another id, or remove the file first.' : 'Check the path and its permissions.';
-  return new ProblemError([
-    { code: 'output-unwritable', file: path, message: `cannot write the file: ${fileFaults[code] ?? code}`, remedy },
-  ]);
+  const message = `cannot write the file: ${fileFaults[code] ?? code}`;
+  return { code: 'output-unwritable', file: path, message, remedy };
 }
 
 /** What the operating system's answers mean. */

@@ -12,3 +12,7 @@ export function settle<Value>(outcome: Outcome<Value>): Value {
   if (outcome.ok) return outcome.value;
   throw new ProblemError(outcome.problems);
 }
+
+export function wrongOption(message: string, remedy: string): Problem {
+  return { code: 'wrong-option', message, remedy };
+}

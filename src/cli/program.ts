@@ -1,7 +1,7 @@
 import { Argument, Command, CommanderError, Option } from 'commander';
 import { ProblemError } from '../errors/problem.ts';
-import { wrongOption } from './options.ts';
 import { packageVersion } from './package-root.ts';
+import { wrongOption } from './problems.ts';
 import { exitStatus, faultOf } from './status.ts';
 import type { Terminal } from './terminal.ts';
 
@@ -56,7 +56,7 @@ function makeProgram(terminal: Terminal, end: (status: number) => void): Command
   const program = new Command('rungcheck');
   program
     .description(
-      'Vets exchange-correlation density functionals against the known exact conditions:\nwhich are broken, where in density space, and by how much.',
+      'Vets exchange-correlation density functionals against the known exact conditions: which are broken, where in density space, and by how much.',
     )
     .version(packageVersion(), '-V, --version', 'print the version')
     .helpOption('-h, --help', 'print help')
@@ -92,7 +92,7 @@ function makeProgram(terminal: Terminal, end: (status: number) => void): Command
 type End = (status: number) => void;
 
 const list = (flags: string, description: string) =>
-  new Option(flags, description).argParser<readonly string[]>(collect).default([], 'none');
+  new Option(flags, description).argParser<readonly string[]>(collect);
 
 const constraintsOption = () =>
   list(
@@ -113,7 +113,7 @@ function addVet(program: Command, terminal: Terminal, end: End): void {
     .command('vet')
     .summary('decide which exact conditions functionals break, where and by how much')
     .description(
-      'Scans the domain for violations of every condition that applies, moves the worst point to the true local extremum\nand confirms it in high precision before it says "violated". "holds" means that no violation was found: not a proof.',
+      'Scans the domain for violations of every condition that applies, moves the worst point to the true local extremum and confirms it in high precision before it says "violated". "holds" means that no violation was found: not a proof.',
     )
     .argument('<sheet or id...>', 'sheet files (…/name.yaml) or ids of the catalogue (pbe)')
     .addOption(
@@ -137,7 +137,7 @@ function addVet(program: Command, terminal: Terminal, end: End): void {
       ),
     )
     .addOption(setOption())
-    .option('--exit-zero', 'end with status 0 even when a condition fails', false)
+    .option('--exit-zero', 'end with status 0 even when a condition fails')
     .addOption(outOption())
     .addHelpText(
       'after',
@@ -170,7 +170,7 @@ function addAt(program: Command, terminal: Terminal, end: End): void {
     .command('at')
     .summary('energies, enhancement factors and derivatives at points')
     .description(
-      'Evaluates the semilocal parts of a functional at one point or at the points of a file. Answers ε_x, ε_c, ε_xc\n(per particle, hartree) and F_x, F_c, F_xc (over ε_x^unif of the unpolarised density).',
+      'Evaluates the semilocal parts of a functional at one point or at the points of a file. Answers ε_x, ε_c, ε_xc (per particle, hartree) and F_x, F_c, F_xc (over ε_x^unif of the unpolarised density).',
     )
     .argument('<sheet or id>', 'a sheet file (…/name.yaml) or an id of the catalogue (pbe)')
     .option('--rs <number>', 'r_s, Wigner-Seitz radius, bohr')
@@ -179,7 +179,7 @@ function addAt(program: Command, terminal: Terminal, end: End): void {
     .option('--alpha <number>', 'α, iso-orbital indicator')
     .option('--q <number>', 'q, reduced Laplacian')
     .option('--points <file>', 'points as comma-separated text, - for standard input')
-    .option('--derivatives', 'derivatives too', false)
+    .option('--derivatives', 'derivatives too')
     .option('--digits <number>', 'significant digits, 1 to 100, in high precision; double precision without it')
     .addOption(setOption())
     .addOption(
@@ -239,7 +239,7 @@ function addCatalogue(program: Command, terminal: Terminal, end: End): void {
     .command('explain')
     .summary('one condition: what it says, why, and what a violation means')
     .description(
-      'Tells of one condition its statement, its local form and how that comes about, whether the form is necessary or\nonly sufficient, where it is tried and to what tolerance, who holds it, who breaks it, and its sources.',
+      'Tells of one condition its statement, its local form and how that comes about, whether the form is necessary or only sufficient, where it is tried and to what tolerance, who holds it, who breaks it, and its sources.',
     )
     .argument('<condition>', 'id of the condition; see rungcheck list constraints')
     .addOption(constraintsOption())

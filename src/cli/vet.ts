@@ -6,7 +6,7 @@ import { parseDomain } from './domain-option.ts';
 import { constantNames, findFunctional, loadConditions, openCatalogue, parameterProblems, vetAll } from './engine.ts';
 import { readInputFile } from './input-file.ts';
 import { parseAssignments, parseIds } from './options.ts';
-import { writeOutputFile } from './output-file.ts';
+import { outputProblems, writeOutputFile } from './output-file.ts';
 import { valueOr } from './problems.ts';
 import { progressLine } from './progress.ts';
 import { exitStatus } from './status.ts';
@@ -16,20 +16,26 @@ export interface VetOptions {
   readonly format: 'table' | 'json';
   readonly domain: string;
   readonly only?: readonly string[];
-  readonly constraints: readonly string[];
-  readonly constants: readonly string[];
-  readonly set: readonly string[];
-  readonly exitZero: boolean;
+  readonly constraints?: readonly string[];
+  readonly constants?: readonly string[];
+  readonly set?: readonly string[];
+  readonly exitZero?: boolean;
   readonly out?: string;
 }
 
 /** `rungcheck vet`: the findings as a table or JSON; answers the exit status. All faults of the request at once. */
 export function vetCommand(sheets: readonly string[], options: VetOptions, terminal: Terminal): number {
   const problems: Problem[] = [];
-  const shelf = openCatalogue(options.constraints);
+  const shelf = openCatalogue(options.constraints ?? []);
+  const { exitZero = false, format, out } = options;
+  if (out !== undefined) problems.push(...outputProblems(out));
   const domain = valueOr(parseDomain(options.domain, readInputFile), undefined, problems);
-  const constants = valueOr(parseAssignments('--constants', options.constants, constantNames), new Map(), problems);
-  const parameters = valueOr(parseAssignments('--set', options.set), new Map(), problems);
+  const constants = valueOr(
+    parseAssignments('--constants', options.constants ?? [], constantNames),
+    new Map(),
+    problems,
+  );
+  const parameters = valueOr(parseAssignments('--set', options.set ?? []), new Map(), problems);
   const known = shelf.constraintIds();
   const ids = options.only === undefined ? known : valueOr(parseIds('--only', options.only, known), [], problems);
   const functionals = sheets.flatMap((sheet) => {
@@ -43,7 +49,6 @@ export function vetCommand(sheets: readonly string[], options: VetOptions, termi
   const progress = progressLine(terminal, Date.now);
   const findings = vetAll({ functionals, conditions, domain, constants, parameters }, progress.report);
   progress.end();
-  const { exitZero, format, out } = options;
   const toFile = out !== undefined;
   const look = { width: toFile ? plainWidth : terminal.width, colour: !toFile && terminal.colour, exitZero };
   const text = format === 'json' ? findingsJson(findings) : vetTable(findings, look);

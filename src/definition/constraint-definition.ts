@@ -1,5 +1,5 @@
 import type { SourcePlace } from '../errors/problem.ts';
-import type { constrainedParts, forces, gateLevels, spaces, statuses } from './constraint-sheet.ts';
+import type { constrainedParts, forces, gateLevels, ruleNames, spaces, statuses } from './constraint-sheet.ts';
 import type { Import, Rung, Step } from './functional-definition.ts';
 import type { SourceText } from './source-text.ts';
 
@@ -8,6 +8,7 @@ export type Status = (typeof statuses)[number];
 export type GateLevel = (typeof gateLevels)[number];
 export type ConstrainedPart = (typeof constrainedParts)[number];
 export type Space = (typeof spaces)[number];
+export type RuleName = (typeof ruleNames)[number];
 
 /** A name of the requirement that stands for a constant with several published values. */
 export interface ConstantChoice {
@@ -56,7 +57,10 @@ export interface ConstraintDefinition {
   readonly at: readonly Step[];
   readonly uses: readonly Import[];
   readonly constants: readonly ConstantChoice[];
+  /** The comparison as written; of a rule its name. */
   readonly requirement: SourceText;
+  /** The rule of numerical quality that decides in the place of a requirement. */
+  readonly rule?: RuleName;
   readonly relative: boolean;
   readonly tolerance: number;
   readonly toleranceReason?: string;

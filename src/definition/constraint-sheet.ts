@@ -6,6 +6,16 @@ export const statuses = ['theorem', 'conjecture', 'estimate', 'norm', 'rule'] as
 export const gateLevels = ['fail', 'warn', 'note', 'score'] as const;
 export const constrainedParts = ['exchange', 'correlation', 'exchange-correlation'] as const;
 export const spaces = ['slice', 'spin'] as const;
+/** Rules of numerical quality, which code decides and not a comparison. */
+export const ruleNames = [
+  'finite-everywhere',
+  'smooth-joins',
+  'no-wiggles',
+  'digits-lost',
+  'spin-paths-agree',
+  'printed-digits',
+  'known-constants',
+] as const;
 
 const rungs = z.array(z.enum(['lda', 'gga', 'meta-gga'])).min(1, { error: 'a list with at least one rung' });
 const coordinate = expressionField('a decimal number or an expression').optional();
@@ -65,9 +75,13 @@ export const constraintSheet = z
       .record(nameField(), idField('the name of a selectable constant'))
       .optional()
       .meta({ description: 'name: selectable constant.' }),
-    requirement: expressionField('a comparison of two expressions').meta({
+    requirement: expressionField('a comparison of two expressions').optional().meta({
       description: 'left >= right, left <= right or left == right, in Fx, Fc, Fxc, d(f, rs), limit(f, rs, inf) ….',
     }),
+    rule: z
+      .enum(ruleNames)
+      .optional()
+      .meta({ description: 'Instead of a requirement: a rule of numerical quality, of which tolerance is the threshold.' }),
     relative: yesNoField().optional().meta({ description: 'For ==: compare relative to the right-hand side.' }),
     tolerance: nonNegativeField().meta({ description: 'Largest margin below zero that is still accepted.' }),
     'tolerance-reason': textField().optional().meta({ description: 'Why this tolerance.' }),

@@ -7,6 +7,7 @@ import type {
   Force,
   GateLevel,
   KnownCase,
+  RuleName,
   Space,
   Status,
 } from './constraint-definition.ts';
@@ -27,6 +28,7 @@ export type {
   Force,
   GateLevel,
   KnownCase,
+  RuleName,
   Space,
   Status,
 } from './constraint-definition.ts';
@@ -43,7 +45,8 @@ export function parseConstraintSheet(text: string, origin: SheetOrigin): Outcome
   checkShape(root, constraintSheet, problems);
   checkNames(root, problems);
   checkGate(root, problems);
-  const requirement = sourceOf(root, 'requirement');
+  checkDecider(root, problems);
+  const requirement = sourceOf(root, 'requirement') ?? sourceOf(root, 'rule');
   if (!problems.empty || requirement === undefined) return failure(problems.sorted());
   return success(read(root, text, origin, requirement));
 }
@@ -77,6 +80,7 @@ function read(root: SheetNode, text: string, origin: SheetOrigin, requirement: S
       return constant === undefined ? [] : [{ name: key, constant, place: keyPlace }];
     }),
     requirement,
+    ...given('rule', textOf(root, 'rule') as RuleName | undefined),
     relative: textOf(root, 'relative') === 'true',
     tolerance: decimalNumber(textOf(root, 'tolerance') ?? '0') ?? 0,
     ...given('toleranceReason', textOf(root, 'tolerance-reason')),
@@ -128,5 +132,18 @@ function checkGate(root: SheetNode, problems: ProblemCollector): void {
   if (gate === undefined && reason !== undefined) {
     const remedy = 'Add gate, or remove gate-reason.';
     problems.add('missing-key', reason.keyPlace, 'the sheet has a gate-reason and no gate', remedy);
+  }
+}
+
+/** A requirement or a rule decides, never both. */
+function checkDecider(root: SheetNode, problems: ProblemCollector): void {
+  const requirement = entryOf(root, 'requirement');
+  const rule = entryOf(root, 'rule');
+  if (requirement === undefined && rule === undefined && root.kind === 'mapping') {
+    const remedy = 'Add requirement: it must be a comparison of two expressions.';
+    problems.add('missing-key', root.place, 'the sheet has no requirement', remedy);
+  }
+  if (requirement !== undefined && rule !== undefined) {
+    problems.add('duplicate-key', rule.keyPlace, 'the sheet has a requirement and a rule', 'Remove one of the two.');
   }
 }

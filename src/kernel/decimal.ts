@@ -49,8 +49,18 @@ export function evaluateDecimal(
   bindings: ReadonlyMap<string, Decimal>,
   digits: number,
 ): Decimal[] {
+  return evaluateInto(new Map(), graph, outputs, bindings, digits);
+}
+
+/** As `evaluateDecimal`, with the values of some nodes known already; those of the nodes that it needs are added. */
+export function evaluateInto(
+  values: Map<NodeId, Decimal>,
+  graph: Graph,
+  outputs: readonly NodeId[],
+  bindings: ReadonlyMap<string, Decimal>,
+  digits: number,
+): Decimal[] {
   const context = decimalContext(digits);
-  const values = new Map<NodeId, Decimal>();
   const known = (id: NodeId): Decimal => values.get(id) as Decimal;
   const pending = [...outputs];
   // A stack instead of a loop in id order, so that the branch not taken costs nothing and cannot fail.

@@ -86,7 +86,7 @@ function placeOf(finding: Finding, known: readonly string[]): string {
 function shareText({ verdict, violatedShare, points }: Finding): string {
   if (verdict === 'proved') return 'nowhere';
   if (verdict === 'holds') return `0 of ${countText(points)}`;
-  if (violatedShare === null) return '';
+  if (verdict !== 'violated' || violatedShare === null) return '';
   return percentText(violatedShare);
 }
 

@@ -14,6 +14,7 @@ import {
 } from './words.ts';
 
 const labelWidth = 11;
+const gateNames: Record<Finding['gate'], string> = { ...gateWords, fail: 'failure' };
 /** Digits of a confirmed margin that are shown; the findings file has them all. */
 const shownDigits = 20;
 
@@ -38,7 +39,7 @@ export function violationLines(
     ...labelled('looked at', own, labelWidth, room),
     ...labelled('cause', causeWords(finding), labelWidth, room),
     ...labelled('status', `${finding.status}; the local form is ${forceWords[finding.force]}`, labelWidth, room),
-    ...labelled('counts as', `${countsAs(finding)}: ${finding.gateReason}`, labelWidth, room),
+    ...labelled('counts as', `${gateNames[finding.gate]}: ${finding.gateReason}`, labelWidth, room),
   ];
   const style = verdictStyle(finding.verdict, finding.gate);
   const rail = paint(style, '┃');
@@ -82,8 +83,4 @@ function crossingWords({ through }: Finding): string {
 /** Said only of printed digits: that the formula is to blame goes without saying. */
 function causeWords({ cause }: Finding): string {
   return cause?.kind === 'printed-digits' ? cause.text : '';
-}
-
-function countsAs({ gate }: Finding): string {
-  return gate === 'fail' ? 'a failure' : gate === 'score' ? 'a score' : `a ${gateWords[gate]}`;
 }

@@ -50,6 +50,6 @@ function missesOf(functional: Functional, { part, row, origin }: Expectation): s
   const compared = difference?.librarySheet === undefined ? functional : onShelf(difference.librarySheet);
   return [
     ...missesGeneral(row, evaluateGeneral(compared, part, generalPoints, library)),
-    ...missesSlice(row, evaluateSlice(compared, part, slicePoints, library)),
+    ...missesSlice(row, evaluateSlice(compared, part, slicePoints, library), coarse?.atAlphaZero),
   ];
 }

@@ -55,7 +55,7 @@ export const violated: Finding = {
   margin: -0.0023147709123456,
   confirmed: '-0.00231477091234567890123456789012',
   confirmedDigits: 43,
-  witness: { rs: 0.5123456789012345, zeta: 1, s: 2.1234567890123456, alpha: 1 },
+  witness: { rs: 0.5123456789012345, zeta: 1, s: 2.1234567890123457, alpha: 1 },
   irrelevant: ['alpha'],
   violatedShare: 0.0423,
   regions: [

@@ -9,6 +9,8 @@ const energyFloor = 1e-5;
 const derivativeFloor = 1e-3;
 /** The stated errors of the r_s derivatives are estimates. */
 const errorFactor = 3;
+/** Differences of F in double precision leave this much, also where F is exactly zero and the estimate smaller. */
+const differenceNoise = 2e-14;
 
 interface Check {
   readonly what: string;
@@ -76,6 +78,7 @@ export function missesSlice(row: ReferenceRow, evaluated: Evaluated, atAlphaZero
           expected: values.d2F_drs2,
           tolerance: Math.max(
             errorFactor * values.d2F_drs2_error,
+            differenceNoise,
             derivativeTolerance * Math.max(Math.abs(values.d2F_drs2), size / rs ** 2),
           ),
         },

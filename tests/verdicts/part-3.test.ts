@@ -1,0 +1,3 @@
+import { compareShelf } from './compare.ts';
+
+compareShelf(2, 4);

@@ -104,7 +104,11 @@ function singlePoint(
     problems.push(wrongOption(`--${name} is not a decimal number: ${text}`, 'Write a number such as 0.5 or 1e-3.'));
   }
   if (wrong.length > 0) return undefined;
-  return { columns: given.map(([name]) => name), points: [Object.fromEntries(given)], lines: [] };
+  // An unpolarised density unless the point says otherwise; the answer shows it.
+  const point = given.some(([name]) => name === 'zeta')
+    ? given
+    : [...given.slice(0, 1), ['zeta', '0'] as const, ...given.slice(1)];
+  return { columns: point.map(([name]) => name), points: [Object.fromEntries(point)], lines: [] };
 }
 
 function spaceOf({ columns }: GivenPoints): PointSpace {

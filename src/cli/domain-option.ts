@@ -81,9 +81,9 @@ function boundsIn(
     return failure([{ ...wrong(`the bounds of ${name} are not numbers: ${lowerText}:${upperText}`), remedy }]);
   }
   const [least, most] = meaningful[name];
-  if (!(lower >= least && upper <= most && lower < upper)) {
+  if (!(lower >= least && upper <= most && lower <= upper)) {
     const range = name === 'rs' ? 'above 0' : `from ${least} to ${most}`;
-    const remedy = `Give a lower and a larger upper bound, ${range}.`;
+    const remedy = `Give a lower and an upper bound, ${range}; equal bounds fix the coordinate.`;
     return failure([
       { ...wrong(`the bounds ${lowerText}:${upperText} of ${name} span nothing that can be looked at`), remedy },
     ]);

@@ -1,21 +1,25 @@
 import type { ConstraintDefinition } from '../definition/constraint.ts';
 import { failure, type Outcome, type Problem, success } from '../errors/problem.ts';
 import { suggestion } from '../errors/suggest.ts';
-import { builtins } from '../expression/builtins.ts';
 import { childrenOf, type Expression, type Requirement } from '../expression/expression.ts';
 import { type PlacedText, parseExpression, parseRequirement, placedProblem } from '../expression/parse.ts';
 import type { Functional } from '../functional/functional.ts';
 import { isPartName } from '../functional/instance.ts';
 import { quantityNames } from '../functional/quantities.ts';
+import { callFault, type ConditionKind, expressionArguments, kindOf, nameOf, sequenceCalls } from './calls.ts';
 import { selectableConstants } from './constants.ts';
 import { coordinatesOf } from './coordinates.ts';
+import { readPoints, type SweptPoint } from './points.ts';
 
 /** A checked condition: its requirement parsed, its reference sheets joined. */
 export interface Condition {
   readonly definition: ConstraintDefinition;
   readonly requirement: Requirement;
+  readonly kind: ConditionKind;
   /** Fixed coordinates. */
   readonly at: ReadonlyMap<string, Expression>;
+  /** The points that a swept condition is asked at: values of the swept coordinates and of a table's columns. */
+  readonly points: readonly SweptPoint[];
   readonly imports: ReadonlyMap<string, Functional>;
 }
 
@@ -23,13 +27,8 @@ export interface Condition {
 export const energyNames = ['Fx', 'Fc', 'Fxc', 'eps_x', 'eps_c', 'eps_xc'] as const;
 export type EnergyName = (typeof energyNames)[number];
 
-/** Calls that only requirements know, with their number of arguments. */
-const conditionCalls: ReadonlyMap<string, number> = new Map([
-  ['d', 2],
-  ['limit', 3],
-  ['spinscaled', 1],
-  ['swapped', 1],
-]);
+/** Names for the shares of exact exchange: of a global hybrid, and at short and at long range. */
+export const shareNames: readonly string[] = ['exactExchange', 'shortRangeExchange', 'longRangeExchange'];
 
 /** Parses a condition and checks every name in it. `find` gives the functionals that it uses as references. */
 export function readCondition(
@@ -53,22 +52,59 @@ export function readCondition(
       ...place,
     });
   }
+  const constantAt = (source: PlacedText): Expression | undefined => {
+    const value = parseExpression(source);
+    if (!value.ok) {
+      problems.push(...value.problems);
+      return undefined;
+    }
+    problems.push(...checkNames(value.value, source, constantNames(definition), definition, imports));
+    return value.value;
+  };
   const at = new Map<string, Expression>();
   for (const step of definition.at) {
-    const value = parseExpression(step.value);
-    if (!value.ok) problems.push(...value.problems);
-    else {
-      problems.push(...checkNames(value.value, step.value, constantNames(definition), definition, imports));
-      at.set(step.name, value.value);
-    }
+    const value = constantAt(step.value);
+    if (value !== undefined) at.set(step.name, value);
   }
+  const points = readPoints(definition, constantAt, problems);
   const requirement = parseRequirement(definition.requirement);
   if (!requirement.ok) return failure([...problems, ...requirement.problems]);
   for (const side of [requirement.value.left, requirement.value.right]) {
     problems.push(...checkNames(side, definition.requirement, knownNames(definition), definition, imports));
   }
+  const kind = kindOf(definition, requirement.value);
+  if (kind === 'swept') problems.push(...unplacedProblems(definition, requirement.value));
   if (problems.length > 0) return failure(problems);
-  return success({ definition, requirement: requirement.value, at, imports });
+  return success({ definition, kind, requirement: requirement.value, at, points, imports });
+}
+
+/** A coordinate that the requirement needs and the sheet gives no value, for a condition asked at points. */
+function unplacedProblems(definition: ConstraintDefinition, { left, right }: Requirement): Problem[] {
+  // q is 0 where the sheet does not say otherwise.
+  const all = coordinatesOf(definition.space).filter((name) => name !== 'q');
+  const given = [...definition.at, ...definition.sweep].map(({ name }) => name);
+  const placed = new Set([...given, ...(definition.table?.columns.map(({ text }) => text) ?? [])]);
+  const needed = (part: Expression): string[] => {
+    if (part.kind === 'name') {
+      if (all.includes(part.name)) return [part.name];
+      const isEnergy = (energyNames as readonly string[]).includes(part.name);
+      return isEnergy || quantityNames().includes(part.name) ? [...all] : [];
+    }
+    if (part.kind === 'member') return [...all];
+    if (part.kind !== 'call') return childrenOf(part).flatMap(needed);
+    const inside = expressionArguments(part).flatMap(needed);
+    const leaves = sequenceCalls.includes(part.name) || part.name === 'at' ? nameOf(part.args[1]) : undefined;
+    return inside.filter((name) => name !== leaves);
+  };
+  const missing = all.filter((name) => !placed.has(name) && [left, right].some((side) => needed(side).includes(name)));
+  return missing.map((name) =>
+    placedProblem(definition.requirement, {
+      code: 'missing-key',
+      message: `${name} has no value: limits and coefficients are asked at given points`,
+      remedy: `Fix it, as in at: { ${name}: 1 }, or list values, as in sweep: { ${name}: [0.5, 1] }.`,
+      offset: 0,
+    }),
+  );
 }
 
 function constantNames(definition: ConstraintDefinition): string[] {
@@ -79,7 +115,8 @@ function knownNames(definition: ConstraintDefinition): string[] {
   const quantities = quantityNames().filter((name) => !/_(sigma|other)$/.test(name));
   return [
     ...constantNames(definition),
-    'exactExchange',
+    ...(definition.table?.columns.map(({ text }) => text) ?? []),
+    ...shareNames,
     ...energyNames,
     ...coordinatesOf(definition.space),
     ...quantities,
@@ -110,12 +147,10 @@ function checkNames(
     }
     if (part.kind === 'member' || part.kind === 'member-call') checkMember(part);
     if (part.kind === 'call') {
-      checkCall(part);
-      // The variable of a derivative or a limit, and the point of a limit, are words and not values.
-      if (part.name === 'd' || part.name === 'limit') {
-        if (part.args[0] !== undefined) visit(part.args[0]);
-        return;
-      }
+      const fault = callFault(part, definition);
+      if (fault !== undefined) problems.push(placedProblem(source, fault));
+      expressionArguments(part).forEach(visit);
+      return;
     }
     childrenOf(part).forEach(visit);
   }
@@ -144,59 +179,6 @@ function checkNames(
         `${imported.definition.id} has no ${part.name}`,
         `It has ${[...imported.parts.keys()].join(' and ')}.`,
         part.offset,
-      );
-    }
-  }
-
-  function checkCall({ name, args, offset }: Extract<Expression, { kind: 'call' }>): void {
-    const arity = builtins.get(name)?.arity ?? conditionCalls.get(name);
-    if (arity === undefined) {
-      report(
-        'unknown-name',
-        `unknown function ${name}`,
-        suggestion(
-          name,
-          [...builtins.keys(), ...conditionCalls.keys()],
-          'A requirement knows d(f, rs), limit(f, rs, inf), spinscaled(Fx) and swapped(f) beside the functions of the sheets.',
-        ),
-        offset,
-      );
-      return;
-    }
-    if (arity !== args.length) {
-      report(
-        'wrong-arguments',
-        `${name} takes ${arity} arguments, not ${args.length}`,
-        `Give ${name} ${arity} arguments.`,
-        offset,
-      );
-      return;
-    }
-    const second = args[1];
-    const coordinates = coordinatesOf(definition.space);
-    if (name === 'd' && !(second?.kind === 'name' && coordinates.includes(second.name))) {
-      report(
-        'wrong-arguments',
-        'd( , ) differentiates by a coordinate',
-        `Write d(f, x) with x one of ${coordinates.join(', ')}.`,
-        offset,
-      );
-    }
-    const third = args[2];
-    const atLowDensity =
-      second?.kind === 'name' && second.name === 'rs' && third?.kind === 'name' && third.name === 'inf';
-    if (name === 'limit' && !atLowDensity) {
-      report('wrong-arguments', 'only the low-density limit is known', 'Write limit(f, rs, inf).', offset);
-    }
-    if (
-      name === 'spinscaled' &&
-      (definition.space !== 'spin' || !(args[0]?.kind === 'name' && args[0].name === 'Fx'))
-    ) {
-      report(
-        'wrong-arguments',
-        'spinscaled( ) is the spin-scaled F_x of the general spin space',
-        'Write spinscaled(Fx), with space: spin.',
-        offset,
       );
     }
   }

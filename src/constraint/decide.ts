@@ -207,7 +207,8 @@ export function notApplicableFinding(
   };
 }
 
-function heading({ definition }: Condition, functional: Functional, settings: Settings) {
+/** What every finding says of its condition. */
+export function heading({ definition }: Condition, functional: Functional, settings: Settings) {
   return {
     constraint: definition.id,
     title: definition.title,
@@ -226,7 +227,8 @@ function heading({ definition }: Condition, functional: Functional, settings: Se
 /** Values of the coordinates that a condition does not depend on, for a witness that can be evaluated. */
 const neutral = { rs: 1, zeta: 0, s: 0, alpha: 1 };
 
-function witnessAt(
+/** A point with a value for every coordinate, those without a say at neutral ones. */
+export function witnessAt(
   condition: Condition,
   point: Readonly<Record<string, number>>,
   fixed: ReadonlyMap<string, number>,

@@ -10,8 +10,10 @@ import { add, choice, constant, div, mul, neg, power, sub, unary, variable } fro
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { substitute, variablesOf } from '../graph/traverse.ts';
 import { type Rational, rational } from '../number/rational.ts';
+import { type Call, nameOf, separationName } from './calls.ts';
 import { type Condition, type EnergyName, energyNames } from './condition.ts';
 import { slicePlaceOf, spinInputs, spinPlaceOf, swappedCoordinates } from './coordinates.ts';
+import { coefficientOf, type Leaves, leafOf } from './leaves.ts';
 import { type LimitSequence, limitAtLowDensity } from './limit.ts';
 
 /** The margin of a condition for a functional: negative where the condition is violated. */
@@ -25,11 +27,15 @@ export interface Margin {
   readonly variables: readonly string[];
   /** Fixed coordinates and their values. */
   readonly fixed: ReadonlyMap<string, NodeId>;
+  /** Of a swept condition: the values at each of its points. */
+  readonly points: readonly ReadonlyMap<string, NodeId>[];
 }
 
 export interface MarginOptions {
   readonly constants: ReadonlyMap<string, Rational>;
   readonly limit: LimitSequence;
+  /** Of a swept condition: collects its limits and orders, and leaves the fixed coordinates variables. */
+  readonly leaves?: Leaves;
   /** New values for parameters of the functional. */
   readonly parameters?: ReadonlyMap<string, Rational>;
   /** Keeps parameters with printed digits as variables, noted here. */
@@ -48,19 +54,31 @@ export function buildMargin(
 ): Margin {
   const { definition, requirement } = condition;
   const instance = instantiate(graph, functional, {
-    parameters: new Map([...(options.parameters ?? [])].map(([name, value]) => [name, constant(graph, value)])),
+    parameters: new Map([
+      ...[...(options.parameters ?? [])].map(([name, value]) => [name, constant(graph, value)] as const),
+      ...(options.leaves === undefined ? [] : separationParameter(graph, functional)),
+    ]),
     ...(options.printed && { printed: options.printed }),
   });
   const scope = requirementScope(graph, condition, instance, options);
   const fixed = new Map([...condition.at].map(([name, value]) => [name, interpret(graph, value, scope)]));
+  const points = condition.points.map(
+    (point) => new Map([...point].map(([name, value]) => [name, interpret(graph, value, scope)])),
+  );
   const sides = [requirement.left, requirement.right].map((side) => interpret(graph, side, scope));
-  const [left, right] = substitute(graph, sides, fixed) as [NodeId, NodeId];
+  const [left, right] = (options.leaves === undefined ? substitute(graph, sides, fixed) : sides) as [NodeId, NodeId];
   const difference = requirement.relation === '<=' ? sub(graph, right, left) : sub(graph, left, right);
   const distance = definition.relative ? div(graph, difference, unary(graph, 'abs', right)) : difference;
   const node = requirement.relation === '==' ? neg(graph, unary(graph, 'abs', distance)) : distance;
   const printed = new Set(options.printed?.keys());
   const variables = [...variablesOf(graph, [node])].filter((name) => !printed.has(name));
-  return { graph, node, left, right, variables, fixed };
+  return { graph, node, left, right, variables, fixed, points };
+}
+
+/** The parameter of the sheet that is ω, kept as the variable along which its limits are taken. */
+function separationParameter(graph: Graph, { exactExchange }: Functional): [string, NodeId][] {
+  if (exactExchange?.kind !== 'range-separated' || exactExchange.omega.kind !== 'name') return [];
+  return [[exactExchange.omega.name, variable(graph, separationName)]];
 }
 
 function requirementScope(graph: Graph, condition: Condition, instance: Instance, options: MarginOptions): Scope {
@@ -76,7 +94,8 @@ function requirementScope(graph: Graph, condition: Condition, instance: Instance
     name(name) {
       const chosen = definition.constants.find((candidate) => candidate.name === name);
       if (chosen !== undefined) return constant(graph, options.constants.get(chosen.constant) as Rational);
-      if (name === 'exactExchange') return exactExchangeShares(instance).longRange;
+      if (name === 'exactExchange' || name === 'longRangeExchange') return exactExchangeShares(instance).longRange;
+      if (name === 'shortRangeExchange') return exactExchangeShares(instance).shortRange;
       if (isEnergyName(name)) return energy(instance, name, place);
       const quantity = quantityOf(name);
       if (quantity?.scope === 'total') return place.total(quantity.quantity);
@@ -98,11 +117,26 @@ function requirementScope(graph: Graph, condition: Condition, instance: Instance
     },
     call(name, args) {
       const value = () => interpret(graph, args[0] as Expression, scope);
+      const { leaves } = options;
+      const call: Call = { kind: 'call', name, args, offset: 0 };
       switch (name) {
         case 'd':
-          return differentiate(graph, value(), nameOf(args[1]));
+          return differentiate(graph, value(), nameOf(args[1]) as string);
+        case 'at': {
+          const elsewhere = new Map([[nameOf(args[1]) as string, interpret(graph, args[2] as Expression, scope)]]);
+          return substitute(graph, [value()], elsewhere)[0] as NodeId;
+        }
         case 'limit':
-          return limitAtLowDensity(graph, value(), options.limit);
+          return leaves === undefined
+            ? limitAtLowDensity(graph, value(), options.limit)
+            : leafOf(graph, leaves, call, value());
+        case 'order':
+        case 'logOrder':
+        case 'coefficient':
+          if (leaves === undefined) throw new RangeError(`${name} has no place in a pointwise margin`);
+          return name === 'coefficient'
+            ? coefficientOf(graph, leaves, call, value())
+            : leafOf(graph, leaves, call, value());
         case 'spinscaled':
           return spinScaledExchange(graph, instance);
         case 'swapped':
@@ -117,11 +151,6 @@ function requirementScope(graph: Graph, condition: Condition, instance: Instance
 
 function isEnergyName(name: string): name is EnergyName {
   return (energyNames as readonly string[]).includes(name);
-}
-
-function nameOf(expression: Expression | undefined): string {
-  if (expression?.kind !== 'name') throw new RangeError('the variable of a derivative is a name');
-  return expression.name;
 }
 
 function partOf(instance: Instance, name: string, place: Place): NodeId {

@@ -69,7 +69,7 @@ export function causeOfViolation(
   const { parameter, value, half } = strongest;
   return {
     kind: 'printed-digits',
-    text: `it lies within the rounding of the printed parameters: ${parameter.sheet} prints ${parameter.name} = ${value.toString()} to ${parameter.digits} digits (± ${half.toPrecision(1)}), and within that it can be met`,
+    text: `it lies within the rounding of the printed parameters: ${parameter.sheet} prints ${parameter.name} = ${value.toString()} to ${parameter.digits} digits (± ${half.toPrecision(1)}), and values within that remove the violation at this point`,
   };
 }
 

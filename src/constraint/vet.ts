@@ -9,6 +9,7 @@ import { type Rational, rationalText } from '../number/rational.ts';
 import { notApplicable } from './applicable.ts';
 import type { Condition } from './condition.ts';
 import { decide, notApplicableFinding, type Settings } from './decide.ts';
+import { decideSwept } from './decide-swept.ts';
 import { axesOf, type Domain } from './domain.ts';
 import { limitInFloat64 } from './limit.ts';
 import { type Evidence, lookAtSamples, lookOnce, lookOnGrid } from './look.ts';
@@ -33,7 +34,11 @@ export function vetFunctional(
   for (const condition of conditions) {
     const reason = notApplicable(condition, functional);
     if (reason !== undefined) findings.set(condition, notApplicableFinding(condition, functional, settings, reason));
-    else margins.set(condition, buildMargin(graph, condition, functional, { ...settings, limit: limitInFloat64 }));
+    else if (condition.kind === 'swept') {
+      const finding = decideSwept(condition, functional, settings);
+      findings.set(condition, finding);
+      onProgress(functional.definition.id, finding.points);
+    } else margins.set(condition, buildMargin(graph, condition, functional, { ...settings, limit: limitInFloat64 }));
   }
   for (const group of groupBySpace(margins)) {
     const evidences = look(graph, group, margins, settings.domain, (points) =>

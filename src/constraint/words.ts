@@ -19,8 +19,8 @@ export function regionWords(hull: readonly Extent[]): string {
   const whole: string[] = [];
   for (const { axis, lower, upper, touchesLower, touchesUpper, spans } of hull) {
     const symbol = symbols[axis] ?? axis;
-    if (spans) whole.push(symbol);
-    else if (lower === upper) limited.push(`${symbol} = ${short(lower)}`);
+    if (lower === upper) limited.push(`${symbol} = ${short(lower)}`);
+    else if (spans) whole.push(symbol);
     else if (touchesUpper) limited.push(`${symbol} ≥ ${short(lower)}`);
     else if (touchesLower) limited.push(`${symbol} ${upperRelation(upper)} ${short(upper)}`);
     else limited.push(`${short(lower)} ≤ ${symbol} ${upperRelation(upper)} ${short(upper)}`);

@@ -18,6 +18,20 @@ export interface ConstantChoice {
   readonly place: SourcePlace;
 }
 
+/** A coordinate with a list of values. */
+export interface Sweep {
+  readonly name: string;
+  readonly values: readonly SourceText[];
+  readonly place: SourcePlace;
+}
+
+/** Points with data of their own; every row has a value for each column. */
+export interface Table {
+  readonly columns: readonly SourceText[];
+  readonly rows: readonly (readonly SourceText[])[];
+  readonly place: SourcePlace;
+}
+
 /** Rungs that cannot meet this condition (together with another one, when it is named). */
 export interface Conflict {
   readonly rungs: readonly Rung[];
@@ -55,6 +69,9 @@ export interface ConstraintDefinition {
   readonly space: Space;
   /** Fixed coordinates: rs, zeta, s, alpha or q, each with a decimal or an expression. */
   readonly at: readonly Step[];
+  /** Coordinates with a list of values; every combination is asked. */
+  readonly sweep: readonly Sweep[];
+  readonly table?: Table;
   readonly uses: readonly Import[];
   readonly constants: readonly ConstantChoice[];
   /** The comparison as written; of a rule its name. */

@@ -19,6 +19,10 @@ export const ruleNames = [
 
 const rungs = z.array(z.enum(['lda', 'gga', 'meta-gga'])).min(1, { error: 'a list with at least one rung' });
 const coordinate = expressionField('a decimal number or an expression').optional();
+const valueList = z
+  .array(expressionField('a decimal number or an expression'), { error: 'a list of values' })
+  .min(1, { error: 'a list with at least one value' })
+  .optional();
 
 const conflict = z.strictObject({
   rungs: rungs.meta({ description: 'Rungs that cannot meet both conditions.' }),
@@ -70,6 +74,19 @@ export const constraintSheet = z
       .strictObject({ rs: coordinate, zeta: coordinate, s: coordinate, alpha: coordinate, q: coordinate })
       .optional()
       .meta({ description: 'Coordinates with a fixed value.' }),
+    sweep: z
+      .strictObject({ rs: valueList, zeta: valueList, s: valueList, alpha: valueList, q: valueList })
+      .optional()
+      .meta({ description: 'Coordinates with a list of values, all combined: the condition is asked at these points.' }),
+    table: z
+      .strictObject({
+        columns: z.array(nameField()).min(1, { error: 'a list with at least one name' }),
+        rows: z
+          .array(z.array(expressionField('a decimal number or an expression'), { error: 'a list of values' }))
+          .min(1, { error: 'a list with at least one row' }),
+      })
+      .optional()
+      .meta({ description: 'Points and data: columns named after coordinates give the points, others are names for the requirement.' }),
     uses: usesField().optional(),
     constants: z
       .record(nameField(), idField('the name of a selectable constant'))

@@ -10,6 +10,7 @@ import type {
   RuleName,
   Space,
   Status,
+  Table,
 } from './constraint-definition.ts';
 import { constraintSheet } from './constraint-sheet.ts';
 import { decimalNumber } from './field.ts';
@@ -31,6 +32,7 @@ export type {
   RuleName,
   Space,
   Status,
+  Table,
 } from './constraint-definition.ts';
 
 /**
@@ -45,6 +47,7 @@ export function parseConstraintSheet(text: string, origin: SheetOrigin): Outcome
   checkShape(root, constraintSheet, problems);
   checkNames(root, problems);
   checkGate(root, problems);
+  checkTable(root, problems);
   checkDecider(root, problems);
   const requirement = sourceOf(root, 'requirement') ?? sourceOf(root, 'rule');
   if (!problems.empty || requirement === undefined) return failure(problems.sorted());
@@ -74,6 +77,10 @@ function read(root: SheetNode, text: string, origin: SheetOrigin, requirement: S
     rungs: textsOf(root, 'rungs') as readonly Rung[],
     space: (textOf(root, 'space') ?? 'slice') as Space,
     at: stepsIn(entryOf(root, 'at')?.node),
+    sweep: entriesOf(entryOf(root, 'sweep')?.node).map(({ key, keyPlace, node }) => {
+      return { name: key, values: valuesIn(node), place: keyPlace };
+    }),
+    ...given('table', tableIn(root)),
     uses: importsIn(entryOf(root, 'uses')?.node),
     constants: entriesOf(entryOf(root, 'constants')?.node).flatMap(({ key, keyPlace, node }) => {
       const constant = scalarOf(node)?.text;
@@ -109,6 +116,28 @@ function counterexampleOf(item: SheetNode): KnownCase {
     ...given('source', textOf(item, 'source')),
     place: item.place,
   };
+}
+
+function valuesIn(node: SheetNode): SourceText[] {
+  return node.kind === 'list' ? node.items.flatMap((item) => scalarOf(item) ?? []) : [];
+}
+
+function tableIn(root: SheetNode): Table | undefined {
+  const entry = entryOf(root, 'table');
+  const columns = entryOf(entry?.node, 'columns')?.node;
+  if (entry === undefined || columns === undefined) return undefined;
+  return { columns: valuesIn(columns), rows: itemsOf(entry.node, 'rows').map(valuesIn), place: entry.keyPlace };
+}
+
+/** Every row of a table is as long as its columns. */
+function checkTable(root: SheetNode, problems: ProblemCollector): void {
+  const table = entryOf(root, 'table')?.node;
+  const width = itemsOf(table, 'columns').length;
+  for (const row of itemsOf(table, 'rows')) {
+    if (row.kind !== 'list' || row.items.length === width) continue;
+    const message = `this row has ${row.items.length} values for ${width} columns`;
+    problems.add('wrong-value', row.place, message, 'Give each row one value for each column.');
+  }
 }
 
 /** An alias and a constant must not share a name. */

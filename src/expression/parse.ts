@@ -124,8 +124,9 @@ function parseText(text: string): MathNode {
   try {
     return mathjs.parse(text);
   } catch (error) {
-    if (!(error instanceof SyntaxError)) throw error;
-    const char = (error as SyntaxError & { char?: number }).char ?? 1;
+    // Whatever the parser throws at a text is a fault of the text, except that it ran out of stack.
+    if (!(error instanceof Error) || error instanceof RangeError) throw error;
+    const char = (error as Error & { char?: number }).char ?? 1;
     const message = error.message.replace(/\s*\(char \d+\)$/, '');
     const offset = Math.max(0, Math.min(char - 1, text.length - 1));
     throw fault(

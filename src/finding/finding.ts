@@ -5,7 +5,7 @@ export const verdictSchema = z.enum(['proved', 'holds', 'violated', 'undecided',
 export type Verdict = z.infer<typeof verdictSchema>;
 
 /** What a finding means for the exit status: only `fail` fails. */
-export const gateSchema = z.enum(['fail', 'warn', 'note', 'score', 'pass']);
+export const gateSchema = z.enum(['fail', 'warn', 'note', 'score', 'accepted', 'pass']);
 export type Gate = z.infer<typeof gateSchema>;
 
 export const forceSchema = z.enum(['necessary-and-sufficient', 'sufficient', 'definition']);
@@ -36,7 +36,8 @@ export const domainSchema = z.strictObject({
       lower: z.number(),
       upper: z.number().nullable().describe('null for infinity'),
       points: z.int().describe('grid values on this axis; 0 where points are sampled'),
-      scale: z.enum(['linear', 'logarithmic', 'toward-upper', 'compact']),
+      scale: z.enum(['linear', 'logarithmic', 'toward-upper', 'compact', 'listed']),
+      values: z.array(z.number()).optional().describe('all values, where the condition is asked at listed points'),
     }),
   ),
   fixed: z.record(z.string(), z.number()),
@@ -49,6 +50,22 @@ export const regionSchema = z.strictObject({
   words: z.string(),
 });
 export type RegionRecord = z.infer<typeof regionSchema>;
+
+/** What was looked at to find a limit, an order of growth or a coefficient that is not pointwise. */
+export const sequenceSchema = z.strictObject({
+  quantity: z.string().describe('as the requirement writes it'),
+  kind: z.enum(['limit', 'order', 'logOrder']),
+  along: z.string().describe('the variable that moves'),
+  toward: z.string().describe('inf or a number'),
+  at: z.record(z.string(), z.number()).describe('the other coordinates'),
+  terms: z.array(z.strictObject({ x: z.string(), value: z.string() })),
+  value: z.string().nullable().describe('extrapolated; null where it could not be told'),
+  error: z.string().nullable().describe('estimate, from the two sequences'),
+  second: z.string().nullable().describe('what a second sequence gives'),
+  closedForm: z.string().nullable().describe('in the parameters of the sheet, where it agrees with the value'),
+  note: z.string(),
+});
+export type SequenceRecord = z.infer<typeof sequenceSchema>;
 
 export const findingSchema = z.strictObject({
   constraint: z.string(),
@@ -77,16 +94,34 @@ export const findingSchema = z.strictObject({
       upperIsEdge: z.boolean(),
     }),
   ),
-  cause: z.strictObject({ kind: z.enum(['formula', 'printed-digits']), text: z.string() }).nullable(),
+  cause: z
+    .strictObject({
+      kind: z.enum(['formula', 'printed-digits']),
+      text: z.string(),
+      parameter: z.strictObject({ sheet: z.string(), name: z.string() }).optional().describe('the one to blame most'),
+    })
+    .nullable(),
   tolerance: z.number(),
   relative: z.boolean(),
   points: z.int(),
   withoutValue: z.int(),
   domain: domainSchema,
   constants: z.record(z.string(), z.number()),
+  sequences: z.array(sequenceSchema).optional().describe('of a condition asked at points: how it was found at the worst one'),
   reason: z.string(),
 });
 export type Finding = z.infer<typeof findingSchema>;
+
+const lineSchema = z.strictObject({ line: z.int(), column: z.int() });
+
+/** Where a sheet and what matters in it stands, for reports that point into files. */
+export const sheetPlacesSchema = z.strictObject({
+  file: z.string().describe('from the current folder'),
+  catalogue: z.boolean().describe('of the catalogue: no file of the user'),
+  parts: z.partialRecord(partSchema, lineSchema),
+  parameters: z.record(z.string(), lineSchema),
+});
+export type SheetPlaces = z.infer<typeof sheetPlacesSchema>;
 
 export const functionalFindingsSchema = z.strictObject({
   id: z.string(),
@@ -100,8 +135,38 @@ export const functionalFindingsSchema = z.strictObject({
   sheetHash: z.string().describe('SHA-256 of the sheet'),
   domain: domainSchema,
   findings: z.array(findingSchema),
+  places: sheetPlacesSchema.optional(),
 });
 export type FunctionalFindings = z.infer<typeof functionalFindingsSchema>;
+
+/** Something to be told that is no finding: an acceptance of the project file that does not fit, or is due for review. */
+export const remarkSchema = z.strictObject({
+  kind: z.enum(['acceptance-unused', 'acceptance-exceeded', 'review-due']),
+  constraint: z.string(),
+  functional: z.string(),
+  text: z.string(),
+  file: z.string(),
+  line: z.int(),
+  column: z.int(),
+});
+export type Remark = z.infer<typeof remarkSchema>;
+
+/** A sheet that could not be vetted; the others were. */
+export const faultSchema = z.strictObject({
+  sheet: z.string().describe('as it was named'),
+  internal: z.boolean().describe('a fault of rungcheck itself'),
+  problems: z.array(
+    z.strictObject({
+      code: z.string(),
+      message: z.string(),
+      remedy: z.string(),
+      file: z.string().optional(),
+      line: z.int().optional(),
+      column: z.int().optional(),
+    }),
+  ),
+});
+export type Fault = z.infer<typeof faultSchema>;
 
 export const findingsSchema = z.strictObject({
   format: z.literal('rungcheck findings'),
@@ -109,6 +174,16 @@ export const findingsSchema = z.strictObject({
   engineVersion: z.string(),
   catalogueVersion: z.string(),
   functionals: z.array(functionalFindingsSchema),
+  remarks: z.array(remarkSchema).optional(),
+  faults: z.array(faultSchema).optional(),
+  shard: z
+    .strictObject({
+      index: z.int(),
+      count: z.int(),
+      sheets: z.array(z.string()).describe('all sheets of the run, in its order'),
+    })
+    .optional()
+    .describe('only with --shard: these are the sheets number index, index + count, …'),
 });
 export type Findings = z.infer<typeof findingsSchema>;
 

@@ -114,7 +114,19 @@ export function power(graph: Graph, base: NodeId, exponent: Rational): NodeId {
   if (node.kind === 'power' && powersMerge(node.exponent, exponent)) {
     return power(graph, node.args[0], node.exponent.mul(exponent));
   }
+  // (a √b)^2 = a² b, which unlike the left-hand side has a derivative at b = 0.
+  if (node.kind === 'binary' && exponent.d === 1n && exponent.s > 0n && hasEvenRootFactor(graph, base)) {
+    const [left, right] = node.args;
+    return (node.op === 'div' ? div : mul)(graph, power(graph, left, exponent), power(graph, right, exponent));
+  }
   return graph.intern({ kind: 'power', exponent, args: [base] });
+}
+
+function hasEvenRootFactor(graph: Graph, id: NodeId): boolean {
+  const node = graph.node(id);
+  if (node.kind === 'power') return node.exponent.d % 2n === 0n && node.exponent.s > 0n;
+  if (node.kind !== 'binary' || (node.op !== 'mul' && node.op !== 'div')) return false;
+  return node.args.some((factor) => hasEvenRootFactor(graph, factor));
 }
 
 /** (x^a)^b = x^(ab) needs x ≥ 0 by the domain of x^a (even denominator), or integers throughout. */

@@ -5,7 +5,7 @@ import { sqrt } from './root.ts';
 import type { Smooth } from './smooth.ts';
 import { branchPointAbove, branchPointBelow, erf, lambertW } from './special.ts';
 import { atan, cos, largestAngle, sin } from './trigonometric.ts';
-import { down, oneStep, type Pair, productDown, productUp, up } from './widen.ts';
+import { down, type Pair, productDown, productUp, up } from './widen.ts';
 
 const every = Number.NEGATIVE_INFINITY;
 const convex = (): 1 => 1;
@@ -158,10 +158,4 @@ function wave(at: (x: number, out: Pair) => void, peak: number) {
       return place + turn * 2 * Math.PI <= upper + slack;
     }
   };
-}
-
-/** A number rounded to the nearest double, as an interval. */
-export function aroundDouble(value: number): [number, number] {
-  if (value === 0) return [-Number.MIN_VALUE, Number.MIN_VALUE];
-  return [value - Math.abs(value) * oneStep - Number.MIN_VALUE, value + Math.abs(value) * oneStep + Number.MIN_VALUE];
 }

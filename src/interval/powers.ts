@@ -88,6 +88,7 @@ export function powerFunction(exponent: Rational): Smooth {
     at,
     least: isReal ? Number.NEGATIVE_INFINITY : 0,
     open: false,
+    pole: isNegative,
     over,
     slope,
     curvature: (lower, upper) => {
@@ -96,12 +97,6 @@ export function powerFunction(exponent: Rational): Smooth {
       return isEven && !isNegative && exponent.d === 1n ? 1 : 0;
     },
   };
-}
-
-/** Whether an interval holds a point at which a negative power has no value: 2 when only an end is one. */
-export function zeroIn(lower: number, upper: number): 0 | 1 | 2 {
-  if (lower > 0 || upper < 0) return 0;
-  return lower === 0 || upper === 0 ? 2 : 1;
 }
 
 function mirror(out: Pair): void {

@@ -9,6 +9,8 @@ export interface Smooth {
   readonly least: number;
   /** Whether the function has no finite value at the least argument. */
   readonly open: boolean;
+  /** Whether f has no finite value at 0, a point inside the domain or at its end. */
+  readonly pole?: boolean;
   /** Whether f increases (1) or decreases (−1) on its whole domain, or a function that encloses it over an interval. */
   readonly over: 1 | -1 | ((lower: number, upper: number, out: Pair) => void);
   /** Encloses f′(x). */
@@ -29,6 +31,9 @@ export function imageOf(f: Smooth, scratch: Scratch): void {
     scratch[register.outside] = leaves;
     lower = f.least;
   } else if (lower === f.least && f.open) scratch[register.outside] = touches;
+  if (f.pole === true && lower <= 0 && upper >= 0) {
+    scratch[register.outside] = (scratch[register.outside] as number) | (lower === 0 || upper === 0 ? touches : leaves);
+  }
   if (!(upper >= lower)) {
     scratch[register.outside] = leaves;
     scratch[register.lower] = Number.NEGATIVE_INFINITY;

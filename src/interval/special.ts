@@ -38,9 +38,15 @@ export const erf = odd(erfPositive);
 export const branchPointBelow = -0.3678794411714424;
 export const branchPointAbove = -0.3678794411714423;
 
-/** Newton's iteration on w·eʷ = x or its logarithm, in ordinary arithmetic: a guess only. */
+/** Newton's iteration on log w + w = log x, or Halley's on w·eʷ = x, in ordinary arithmetic: a guess only. */
 function guess(x: number): number {
-  let w = x > 3 ? Math.log(x) - Math.log(Math.log(x)) : x > -0.3 ? Math.log1p(x) * 0.8 : Math.sqrt(Math.max(0, 2 * (1 + Math.E * x))) - 1;
+  if (Math.abs(x) < 1e-8) return x * (1 - x);
+  if (x > 3) {
+    let w = Math.log(x) - Math.log(Math.log(x));
+    for (let count = 0; count < 6; count++) w -= (Math.log(w) + w - Math.log(x)) * (w / (1 + w));
+    return w;
+  }
+  let w = x > -0.3 ? Math.log1p(x) * 0.8 : Math.sqrt(Math.max(0, 2 * (1 + Math.E * x))) - 1;
   for (let count = 0; count < 30; count++) {
     const power = Math.exp(w);
     const residual = w * power - x;

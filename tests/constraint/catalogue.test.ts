@@ -3,11 +3,7 @@ import { vetFunctional } from '../../src/constraint/vet.ts';
 import { conditionOf, functionalOf, shelf, standardSettings } from './catalogue.ts';
 
 /** Conditions that no functional of the shelf breaks: forms made to break them are in violations.test.ts. */
-const brokenOnlyByMadeForms = [
-  'correlation-spin-symmetry',
-  'exchange-spin-scaling',
-  'exchange-non-positive',
-];
+const brokenOnlyByMadeForms = ['correlation-spin-symmetry', 'exchange-spin-scaling', 'exchange-non-positive'];
 
 describe('each condition says what the literature says of the functionals that its sheet names', () => {
   for (const id of shelf.constraintIds()) {

@@ -88,6 +88,7 @@ describe('what has no place in an expression is a problem at its place', () => {
     ['true', 'expression-form', 1],
     ['a # b', 'expression-syntax', 3],
     ['x to y', 'expression-form', 1],
+    ['0ond', 'expression-syntax', 1],
   ])('%s', (text, code, column) => expect(fault(text)).toEqual({ code, column }));
 
   test('deep nesting and long text are refused, not overflowed', () => {

@@ -16,6 +16,11 @@ const gas = sheet(
 );
 const gga = sheet('gga', 'exchange: { enhancement: 1 + s^2 }');
 
+test('a step that sums a channel step over spin can be used outside a sum', () => {
+  const steps = ['  where:', '    ofChannel: n_sigma/n*rs_sigma', '    summed: spinsum(ofChannel)'];
+  expect(problems(sheet('lda', 'correlation:', ...steps, '  per-particle: -summed'))).toEqual([]);
+});
+
 describe('each fault in the names of a sheet is a problem at its line and column', () => {
   test('an unknown name, with what was meant', () => {
     const outcome = link('test', {

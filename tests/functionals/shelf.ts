@@ -16,14 +16,21 @@ export function onShelf(id: string): Functional {
   return outcome.value;
 }
 
-/** Energy per particle and enhancement of a part at (r_s, ζ, s, α = 1), to 60 digits. */
+interface Coordinates {
+  readonly rs: Decimal.Value;
+  readonly zeta?: Decimal.Value;
+  readonly s?: Decimal.Value;
+  readonly alpha?: Decimal.Value;
+}
+
+/** Energy per particle and enhancement of a part at (r_s, ζ, s, α), to 60 digits. */
 export function atSlice(
   functional: Functional,
   part: 'exchange' | 'correlation',
-  { rs, zeta = 0, s = 0 }: { rs: Decimal.Value; zeta?: Decimal.Value; s?: Decimal.Value },
+  { rs, zeta = 0, s = 0, alpha = 1 }: Coordinates,
 ): { energy: Decimal; enhancement: Decimal } {
   const graph = new Graph();
-  const coordinates = { rs, zeta, s, alpha: 1 };
+  const coordinates = { rs, zeta, s, alpha };
   const [rsNode, zetaNode, sNode, alphaNode] = Object.keys(coordinates).map((name) => variable(graph, name));
   const place = slicePlace(graph, {
     rs: rsNode as number,

@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { differentiate } from '../../src/derivative/differentiate.ts';
 import {
   add,
   binary,
@@ -163,4 +164,24 @@ describe('what simplification does', () => {
     const node = graph.node(raise(graph, variable(graph, 'x'), constant(graph, rational(4, 3))));
     expect(node.kind === 'power' && node.exponent.equals(rational(4, 3))).toBe(true);
   });
+});
+
+it('squares √x times a factor without the root, so that the derivative exists at x = 0', () => {
+  const graph = new Graph();
+  const x = variable(graph, 'x');
+  const y = variable(graph, 'y');
+  const root = power(graph, x, rational(1, 2));
+  const squared = power(graph, binary(graph, 'div', binary(graph, 'mul', root, y), pi(graph)), rational(2));
+  const slope = differentiate(graph, squared, 'x');
+  const [value] = evaluateDecimal(
+    graph,
+    [slope],
+    new Map([
+      ['x', new Decimal(0)],
+      ['y', new Decimal(3)],
+    ]),
+    20,
+  );
+  // 9/π²
+  expect((value as Decimal).toNumber()).toBeCloseTo(9 / Math.PI ** 2, 14);
 });

@@ -1,0 +1,1 @@
+import { formatHex, interpolate } from 'culori/fn';

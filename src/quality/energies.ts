@@ -1,0 +1,96 @@
+import { energiesAt } from '../evaluate/energies.ts';
+import type { Functional } from '../functional/functional.ts';
+import { instantiate } from '../functional/instance.ts';
+import { densityPlace, type Place, slicePlace } from '../functional/place.ts';
+import { constant, mul, variable } from '../graph/build.ts';
+import { Graph, type NodeId } from '../graph/graph.ts';
+import { variablesOf } from '../graph/traverse.ts';
+import type { Rational } from '../number/rational.ts';
+
+/** Coordinates of the slice. */
+export const sliceNames = ['rs', 'zeta', 's', 'alpha', 'q'] as const;
+export type SliceName = (typeof sliceNames)[number];
+
+export const densityNames = [
+  'n_up',
+  'n_dn',
+  'sigma_uu',
+  'sigma_ud',
+  'sigma_dd',
+  'tau_up',
+  'tau_dn',
+  'lapl_up',
+  'lapl_dn',
+] as const;
+export type DensityName = (typeof densityNames)[number];
+
+/** One energy of a functional, under the symbol that a reader knows. */
+export interface Energy {
+  readonly symbol: string;
+  readonly node: NodeId;
+}
+
+/** Energies of a functional in a graph of their own, and the variables that they depend on. */
+export interface EnergyGraph<Name extends string> {
+  readonly graph: Graph;
+  readonly energies: readonly Energy[];
+  readonly variables: readonly Name[];
+}
+
+type Parameters = ReadonlyMap<string, Rational>;
+
+/** F_x and F_c on the slice, or F_xc where the sheet gives only their sum. */
+export function sliceEnergies(functional: Functional, parameters: Parameters): EnergyGraph<SliceName> {
+  const graph = new Graph();
+  const v = (name: SliceName) => variable(graph, name);
+  const place = slicePlace(graph, { rs: v('rs'), zeta: v('zeta'), s: v('s'), alpha: v('alpha'), q: v('q') });
+  const energies = energiesOf(graph, functional, parameters, place, 'enhancement');
+  return { graph, energies, variables: namesIn(sliceNames, graph, energies) };
+}
+
+/** Energies per volume, n ε_x and n ε_c, of spin densities, their gradients and kinetic-energy densities. */
+export function densityEnergies(functional: Functional, parameters: Parameters): EnergyGraph<DensityName> {
+  const graph = new Graph();
+  const v = (name: DensityName) => variable(graph, name);
+  const place = densityPlace(graph, {
+    n_up: v('n_up'),
+    n_dn: v('n_dn'),
+    sigma_uu: v('sigma_uu'),
+    sigma_ud: v('sigma_ud'),
+    sigma_dd: v('sigma_dd'),
+    tau_up: v('tau_up'),
+    tau_dn: v('tau_dn'),
+    lapl_up: v('lapl_up'),
+    lapl_dn: v('lapl_dn'),
+  });
+  const energies = energiesOf(graph, functional, parameters, place, 'perParticle').map(({ symbol, node }) => ({
+    symbol,
+    node: mul(graph, place.total('n'), node),
+  }));
+  return { graph, energies, variables: namesIn(densityNames, graph, energies) };
+}
+
+/** The energies of a functional at a place of a graph. */
+export function energiesOf(
+  graph: Graph,
+  functional: Functional,
+  parameters: Parameters,
+  place: Place,
+  kind: 'enhancement' | 'perParticle',
+): Energy[] {
+  const changed = new Map([...parameters].map(([name, value]) => [name, constant(graph, value)]));
+  const { x, c, xc } = energiesAt(instantiate(graph, functional, { parameters: changed }), place, kind);
+  const letter = kind === 'enhancement' ? 'F' : 'nε';
+  const named = (part: string, node: NodeId | undefined) =>
+    node === undefined ? [] : [{ symbol: `${letter}_${part}`, node }];
+  const separate = [...named('x', x), ...named('c', c)];
+  return separate.length > 0 ? separate : named('xc', xc);
+}
+
+function namesIn<Name extends string>(names: readonly Name[], graph: Graph, energies: readonly Energy[]): Name[] {
+  const used = variablesOf(
+    graph,
+    energies.map(({ node }) => node),
+  );
+  return names.filter((name) => used.has(name));
+}

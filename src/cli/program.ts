@@ -226,10 +226,26 @@ function addCatalogue(program: Command, terminal: Terminal, end: End): void {
         .choices(['table', 'json'])
         .default('table'),
     )
+    .addOption(new Option('--rung <rung>', 'functionals of one rung').choices(['lda', 'gga', 'meta-gga']))
+    .addOption(
+      new Option('--part <part>', 'functionals that give it, or conditions on it').choices([
+        'exchange',
+        'correlation',
+        'exchange-correlation',
+      ]),
+    )
+    .option('--hybrid', 'functionals with exact exchange')
+    .option('--match <text>', 'those with the text in their id, name or title')
     .addOption(constraintsOption())
     .addHelpText(
       'after',
-      examples('Examples:', '  rungcheck list functionals', '  rungcheck list constraints --format json'),
+      examples(
+        'Examples:',
+        '  rungcheck list functionals',
+        '  rungcheck list functionals --rung meta-gga --hybrid',
+        '  rungcheck list constraints --part correlation',
+        '  rungcheck list constraints --format json',
+      ),
     )
     .action(async (what, options) => {
       const { listCommand } = await import('./list.ts');

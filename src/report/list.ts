@@ -28,26 +28,42 @@ interface ListOptions {
   readonly colour: boolean;
 }
 
+/** The functionals by rung, those with exact exchange after those without. */
 export function functionalList(functionals: readonly ListedFunctional[], options: ListOptions): string {
   const columns = [
     { heading: 'id', align: 'left' as const },
     { heading: 'name', align: 'left' as const },
-    { heading: 'rung', align: 'left' as const },
     { heading: 'year', align: 'right' as const },
     { heading: 'parameters', align: 'right' as const },
     { heading: 'gives', align: 'left' as const },
     { heading: 'exact exchange', align: 'left' as const },
   ];
-  const rows = functionals.map(({ id, name, rung, year, parameters, parts, exactExchange }) => [
-    id,
-    name,
-    rung,
-    year === null ? '' : String(year),
-    parameters === 0 ? '·' : String(parameters),
-    partsText(parts),
-    exactExchange ?? '',
-  ]);
-  return listText(columns, rows, options, `${functionals.length} functionals`);
+  const groups = groupOrder
+    .map((name) => ({ name, members: functionals.filter((functional) => groupOf(functional) === name) }))
+    .filter(({ members }) => members.length > 0);
+  const rows = groups.flatMap(({ members }) =>
+    members.map(({ id, name, year, parameters, parts, exactExchange }) => [
+      id,
+      name,
+      year === null ? '' : String(year),
+      parameters === 0 ? '·' : String(parameters),
+      partsText(parts),
+      exactExchange ?? '',
+    ]),
+  );
+  const starts = new Map<number, string>();
+  let row = 0;
+  for (const { name, members } of groups) {
+    starts.set(row, name);
+    row += members.length;
+  }
+  return listText(columns, rows, options, `${functionals.length} functionals`, undefined, starts);
+}
+
+const groupOrder = ['lda', 'gga', 'hybrid gga', 'meta-gga', 'hybrid meta-gga', 'hybrid lda'];
+
+function groupOf({ rung, exactExchange }: ListedFunctional): string {
+  return exactExchange === null ? rung : `hybrid ${rung}`;
 }
 
 export function constraintList(constraints: readonly ListedConstraint[], options: ListOptions): string {
@@ -86,6 +102,8 @@ function listText(
   { width, colour }: ListOptions,
   closing: string,
   textHeading?: string,
+  /** Headings of groups, by the row that each stands above. */
+  groups: ReadonlyMap<number, string> = new Map(),
 ): string {
   const paint = makePaint(colour);
   const [heading = [], ...lines] = setColumns(
@@ -97,6 +115,8 @@ function listText(
   const room = width - used - 2;
   const withText = textHeading !== undefined && room >= 44;
   const body = lines.flatMap((cells, index) => {
+    const group = groups.get(index);
+    if (group !== undefined) return [...(index === 0 ? [] : ['']), paint('strong', group), line(cells).trimEnd()];
     if (!withText) return [line(cells).trimEnd()];
     const [first = '', ...more] = wrap(rows[index]?.[columns.length] ?? '', room);
     return [`${padEnd(line(cells), used)}  ${first}`, ...more.map((text) => `${' '.repeat(used)}  ${text}`)];

@@ -5,7 +5,7 @@ import type { Paint } from './paint.ts';
 import { forceNames, gateWords, knownCoordinates, placeWords, verdictMarks, verdictStyle } from './words.ts';
 
 const verdictOrder: readonly Verdict[] = ['violated', 'undecided', 'holds', 'proved', 'not-applicable'];
-const gateOrder: readonly Gate[] = ['fail', 'warn', 'note', 'score', 'pass'];
+const gateOrder: readonly Gate[] = ['fail', 'warn', 'note', 'score', 'accepted', 'pass'];
 
 /** Worst first: by verdict, then by what it counts as; otherwise in the order given. */
 export function worstFirst(findings: readonly Finding[]): Finding[] {

@@ -124,6 +124,7 @@ function countWords(findings: readonly Finding[]): string {
     gates.warn === 0 ? '' : `${gates.warn} ${gates.warn === 1 ? 'warning' : 'warnings'}`,
     gates.note === 0 ? '' : `${gates.note} ${gates.note === 1 ? 'note' : 'notes'}`,
     gates.score === 0 ? '' : `${gates.score} ${gates.score === 1 ? 'score' : 'scores'}`,
+    gates.accepted === 0 ? '' : `${gates.accepted} accepted`,
   ].filter((text) => text !== '');
   const others = [
     verdicts.proved === 0 ? '' : `${verdicts.proved} proved`,

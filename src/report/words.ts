@@ -18,6 +18,7 @@ export const gateWords: Record<Gate, string> = {
   warn: 'warning',
   note: 'note',
   score: 'score',
+  accepted: 'accepted',
   pass: '',
 };
 
@@ -94,13 +95,16 @@ const scaleWords: Record<DomainRecord['coordinates'][number]['scale'], string> =
   logarithmic: ' (log)',
   'toward-upper': '',
   compact: ' (compact)',
+  listed: '',
 };
 
 /** `ζ = 0; r_s 0.01 … 100 (log), s 0 … 5`: fixed coordinates first. */
 export function domainWords({ coordinates, fixed, space }: DomainRecord): string {
   const axes = coordinates
     .filter(({ name }) => !(name in fixed))
-    .map(({ name, lower, upper, scale }) => {
+    .map(({ name, lower, upper, scale, values }) => {
+      if (values !== undefined)
+        return bound(`${coordinateSymbol(name)} = ${values.map((at) => shortText(at, 6)).join(' | ')}`);
       const end = upper === null ? '∞' : shortText(upper, 6);
       return bound(`${coordinateSymbol(name)} ${shortText(lower, 6)} … ${end}${scaleWords[scale]}`);
     });

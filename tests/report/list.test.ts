@@ -33,9 +33,12 @@ describe('lists and explanations, from invented data', () => {
       plain,
     );
     expect(text.split('\n')).toEqual([
-      'id     name   rung  year  parameters  gives  exact exchange',
-      'inv-0  INV-0  gga   2001           3  x + c  0.25',
-      'inv-c  INV-C  lda                  ·  c',
+      'id     name   year  parameters  gives  exact exchange',
+      'lda',
+      'inv-c  INV-C                 ·  c',
+      '',
+      'hybrid gga',
+      'inv-0  INV-0  2001           3  x + c  0.25',
       '',
       '2 functionals',
       '',

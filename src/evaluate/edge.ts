@@ -7,8 +7,14 @@ import { type Decimal, decimalContext } from '../number/decimal.ts';
  * there. The limit is approached from within the domain along two sequences; where they agree it is the value.
  */
 const digits = 100;
-/** How far inside the domain the edge is approached, relative to the size of the quantity. */
-const steps = ['1e-24', '1e-30'];
+/**
+ * How far inside the domain the edge is approached: s and α at quite different rates, so that a corner in which the
+ * value depends on the direction (τ_W/τ at s = α = 0) is seen to have no limit.
+ */
+const approachSteps = [
+  { s: '1e-12', alpha: '1e-36', other: '1e-24' },
+  { s: '1e-34', alpha: '1e-14', other: '1e-30' },
+] as const;
 /** The two sequences must agree to this much, relative. */
 const agreement = '1e-7';
 
@@ -17,7 +23,9 @@ const agreement = '1e-7';
  * `point` has the exact decimal text of each coordinate that matters.
  */
 export function limitAtEdge(graph: Graph, node: NodeId, point: Readonly<Record<string, string>>): number | undefined {
-  const approaches = steps.map((step) => evaluateDecimal(graph, [node], moveInside(point, step), digits)[0] as Decimal);
+  const approaches = approachSteps.map(
+    (step) => evaluateDecimal(graph, [node], moveInside(point, step), digits)[0] as Decimal,
+  );
   const [far, near] = approaches as [Decimal, Decimal];
   if (!far.isFinite() || !near.isFinite()) return undefined;
   const difference = near.minus(far).abs();
@@ -26,15 +34,20 @@ export function limitAtEdge(graph: Graph, node: NodeId, point: Readonly<Record<s
 }
 
 /** The point moved a little inside wherever a coordinate lies at an edge. */
-function moveInside(point: Readonly<Record<string, string>>, stepText: string): Map<string, Decimal> {
+function moveInside(
+  point: Readonly<Record<string, string>>,
+  steps: (typeof approachSteps)[number],
+): Map<string, Decimal> {
   const context = decimalContext(digits);
-  const step = context.from(stepText);
+  const step = context.from(steps.other);
   const value = (name: string) => context.from(point[name] ?? Number.NaN);
   const inside = new Map(Object.keys(point).map((name) => [name, value(name)]));
-  if (point['zeta'] !== undefined && value('zeta').abs().equals(1)) {
+  if (point.zeta !== undefined && value('zeta').abs().equals(1)) {
     inside.set('zeta', value('zeta').times(context.from(1).minus(step)));
   }
-  for (const name of ['s', 'alpha']) if (point[name] !== undefined && value(name).isZero()) inside.set(name, step);
+  for (const name of ['s', 'alpha'] as const) {
+    if (point[name] !== undefined && value(name).isZero()) inside.set(name, context.from(steps[name]));
+  }
   for (const channel of ['up', 'dn'] as const) moveChannelInside(inside, channel, step);
   return inside;
 }

@@ -8,9 +8,11 @@ export const tableHead = 'functional,constraint,verdict,gate,margin,violated_sha
  * The lines of the table of verdicts for one functional: every condition of the catalogue that applies, on the
  * standard domain. Margins to four digits and shares to two, so that only what a reader would notice changes a line.
  */
-export function verdictLines(id: string): string[] {
+export function verdictLines(id: string, onPoints: (points: number) => void = () => {}): string[] {
   const conditions = shelf.constraintIds().map(conditionOf);
-  const { findings } = vetFunctional(functionalOf(id), conditions, standardSettings);
+  const { findings } = vetFunctional(functionalOf(id), conditions, standardSettings, (_subject, points) =>
+    onPoints(points),
+  );
   return findings
     .filter(({ verdict }) => verdict !== 'not-applicable')
     .map(({ constraint, verdict, gate, margin, violatedShare }) =>

@@ -1,6 +1,9 @@
 /** The steps of a margin scale: rising, zero among them; a colour between each two and beyond the ends. */
 export interface Levels {
   readonly levels: readonly number[];
+  /** Steps beyond the last level on either side that the values reach. */
+  readonly below: boolean;
+  readonly above: boolean;
   /** `linear`: even steps. `compressed`: 1, 2, 5, 10 … times a power of ten on either side of zero. */
   readonly kind: 'linear' | 'compressed';
   readonly ticks: readonly number[];
@@ -8,6 +11,7 @@ export interface Levels {
 
 /** Colour steps on one side at most. */
 const mostSteps = 10;
+const mostLinearSteps = 24;
 
 /**
  * Steps that show the values of all panels of a figure: even where the values are of one size, compressed where most
@@ -15,19 +19,24 @@ const mostSteps = 10;
  */
 export function chooseLevels(values: readonly number[], tolerance: number): Levels {
   const finite = values.filter((value) => Number.isFinite(value));
-  const lowest = Math.min(0, ...extent(finite));
-  const highest = Math.max(0, ...extent(finite));
+  const [least, most] = extent(finite.length === 0 ? [0] : finite);
+  const [lowest, highest] = [Math.min(0, least), Math.max(0, most)];
   const largest = Math.max(-lowest, highest, tolerance);
   const small = smallSize(finite, tolerance, largest);
-  return largest / small > 12 ? compressed(lowest, highest, largest, small) : linear(lowest, highest, largest);
+  const levels =
+    largest / small > 12 ? compressed(lowest, highest, largest, small) : linear([least, most], [lowest, highest]);
+  return {
+    ...levels,
+    below: (levels.levels[0] as number) < 0 || lowest < -tolerance,
+    above: finite.some((value) => value >= -tolerance),
+  };
 }
 
-function extent(values: readonly number[]): [number, number] | [] {
-  if (values.length === 0) return [];
+function extent(values: readonly number[]): [number, number] {
   return [values.reduce((a, b) => Math.min(a, b)), values.reduce((a, b) => Math.max(a, b))];
 }
 
-/** A size that the scale must still resolve: the lower tenth of the violated margins, or of all. */
+/** A size that the scale must still resolve: that of the lower quarter of the margins, violated or held. */
 function smallSize(values: readonly number[], tolerance: number, largest: number): number {
   const violated = values.filter((value) => value < -tolerance).map((value) => -value);
   const kept = values.filter((value) => value > tolerance);
@@ -38,7 +47,7 @@ function smallSize(values: readonly number[], tolerance: number, largest: number
 
 const mantissas = [1, 2, 5] as const;
 
-function compressed(lowest: number, highest: number, largest: number, small: number): Levels {
+function compressed(lowest: number, highest: number, largest: number, small: number): Omit<Levels, 'below' | 'above'> {
   const top = Math.ceil(Math.log10(largest) - 1e-9);
   const bottom = Math.max(Math.floor(Math.log10(small)), top - Math.ceil(mostSteps / 1) + 1);
   const decades = top - bottom;
@@ -51,21 +60,31 @@ function compressed(lowest: number, highest: number, largest: number, small: num
     }
   }
   const levels = [
-    ...sizes.filter((size) => size < -lowest).map((size) => -size).reverse(),
+    ...sizes
+      .filter((size) => size < -lowest)
+      .map((size) => -size)
+      .reverse(),
     0,
     ...sizes.filter((size) => size < highest),
   ];
-  const ticks = levels.filter((level) => level === 0 || chosen.length === 1 || /^1(e|$)/.test(Math.abs(level).toExponential()));
+  const ticks = levels.filter(
+    (level) => level === 0 || chosen.length === 1 || /^1(e|$)/.test(Math.abs(level).toExponential()),
+  );
   return { levels, kind: 'compressed', ticks };
 }
 
-function linear(lowest: number, highest: number, largest: number): Levels {
-  const step = niceStep(largest / mostSteps);
+function linear(
+  [least, most]: readonly [number, number],
+  [lowest, highest]: readonly [number, number],
+): Omit<Levels, 'below' | 'above'> {
+  if (lowest === highest) return { levels: [0], kind: 'linear', ticks: [0] };
+  const step = niceStep(Math.max((most - least) / 10, (highest - lowest) / mostLinearSteps));
   const count = (end: number) => Math.max(0, Math.ceil(end / step - 1e-9) - 1);
-  const levels: number[] = [];
-  for (let k = -count(-lowest); k <= count(highest); k++) levels.push(Number((k * step).toPrecision(12)) + 0);
-  const every = levels.length > 8 ? 2 : 1;
-  return { levels, kind: 'linear', ticks: levels.filter((level) => Math.round(level / step) % every === 0) };
+  const numbers: number[] = [];
+  for (let k = -count(-lowest); k <= count(highest); k++) numbers.push(k);
+  const every = [1, 2, 5, 10].find((candidate) => numbers.length / candidate <= 9) ?? 10;
+  const level = (k: number) => Number((k * step).toPrecision(12)) + 0;
+  return { levels: numbers.map(level), kind: 'linear', ticks: numbers.filter((k) => k % every === 0).map(level) };
 }
 
 function niceStep(size: number): number {
@@ -75,17 +94,16 @@ function niceStep(size: number): number {
 }
 
 /**
- * A margin as the picture measures it: even steps of the result are even steps of colour. Between levels it runs
- * linearly, so that contours fall where they belong.
+ * A margin as the picture measures it: level k at k, so that even steps of the result are even steps of colour. It runs
+ * without sharp bends (in the logarithm on compressed steps), for contours fall where they belong only then.
  */
-export function compress(levels: readonly number[], value: number): number {
+export function compress({ levels, kind }: Pick<Levels, 'levels' | 'kind'>, value: number): number {
   const last = levels.length - 1;
   if (last === 0) return value;
-  const [first, end] = [levels[0] as number, levels[last] as number];
-  if (value <= first) return (value - first) / Math.max(Math.abs(first), (levels[1] as number) - first);
-  if (value >= end) return last + (value - end) / Math.max(Math.abs(end), end - (levels[last - 1] as number));
   let index = 0;
-  while ((levels[index + 1] as number) < value) index++;
+  while (index < last - 1 && (levels[index + 1] as number) < value) index++;
+  // Beyond the ends the first and the last step go on.
   const [a, b] = [levels[index] as number, levels[index + 1] as number];
-  return index + (value - a) / (b - a);
+  const inLogarithm = kind === 'compressed' && a * b > 0 && a * value > 0;
+  return index + (inLogarithm ? Math.log(value / a) / Math.log(b / a) : (value - a) / (b - a));
 }

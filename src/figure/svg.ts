@@ -26,25 +26,27 @@ export function element(name: string, attributes: Attributes, content = ''): str
 }
 
 export interface Drawing {
-  /** Millimetres. */
+  /** In the units that it is drawn in. */
   readonly width: number;
   readonly height: number;
+  /** Millimetres to the unit. */
+  readonly scale: number;
   readonly title: string;
   /** What a reader who does not see it is told. */
   readonly description: string;
   readonly content: string;
 }
 
-/** A whole SVG file, one unit to the millimetre, on white. */
-export function svgDocument({ width, height, title, description, content }: Drawing): string {
+/** A whole SVG file, on white. */
+export function svgDocument({ width, height, scale, title, description, content }: Drawing): string {
   const named = `${element('title', {}, escapeXml(title))}${element('desc', {}, escapeXml(description))}`;
   const ground = element('rect', { width, height, fill: '#ffffff' });
   const svg = element(
     'svg',
     {
       xmlns: 'http://www.w3.org/2000/svg',
-      width: `${number(width)}mm`,
-      height: `${number(height)}mm`,
+      width: `${number(width * scale)}mm`,
+      height: `${number(height * scale)}mm`,
       viewBox: `0 0 ${number(width)} ${number(height)}`,
       role: 'img',
       'stroke-linejoin': 'round',

@@ -11,7 +11,7 @@ export function words(text: string, face: Face = 'regular'): Run[] {
  */
 export function formula(text: string): Run[] {
   const runs: Run[] = [];
-  const token = /_(\{[^}]*\}|[\p{L}\p{N}]+)|\^(\([^()]*\)|[-−+]?[\p{L}\p{N}.]+)|(\p{L}+)|([\s\S])/gu;
+  const token = /_(\{[^}]*\}|[\p{L}\p{Nd}]+)|\^(\([^()]*\)|[-−+]?[\p{L}\p{N}.]+)|(\p{L}+)|([\s\S])/gu;
   for (const [, sub, raised, letters, other] of text.matchAll(token)) {
     if (sub !== undefined) runs.push({ text: sub.replace(/^\{|\}$/g, ''), face: subscriptFace(sub), script: 'sub' });
     else if (raised !== undefined) {
@@ -45,5 +45,7 @@ function joined(runs: readonly Run[]): Run[] {
 
 /** Runs as one plain text, for descriptions. */
 export function plainText(runs: readonly Run[]): string {
-  return runs.map(({ text, script }) => (script === 'sub' ? `_${text}` : script === 'super' ? `^${text}` : text)).join('');
+  return runs
+    .map(({ text, script }) => (script === 'sub' ? `_${text}` : script === 'super' ? `^${text}` : text))
+    .join('');
 }

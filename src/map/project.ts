@@ -67,7 +67,7 @@ export function projectWorst(
 }
 
 /** The index of the smallest finite value from `start`, counted from there; −1 where there is none. */
-function lowestIn(values: Float64Array, start: number, count: number): number {
+export function lowestIn(values: Float64Array, start: number, count: number): number {
   let lowest = -1;
   let least = Number.POSITIVE_INFINITY;
   for (let index = 0; index < count; index++) {

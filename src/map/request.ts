@@ -1,7 +1,7 @@
 import type { Condition } from '../constraint/condition.ts';
 import type { Domain, DomainCoordinate } from '../constraint/domain.ts';
 import type { Functional } from '../functional/functional.ts';
-import type { Rational } from '../number/rational.ts';
+import { parseDecimal, type Rational, rationalText, toNumber } from '../number/rational.ts';
 
 export interface MappedFunctional {
   readonly functional: Functional;
@@ -21,4 +21,14 @@ export interface MapRequest {
   readonly slices: readonly ReadonlyMap<DomainCoordinate, number>[];
   /** Cells along each axis. */
   readonly cells: number;
+}
+
+/** Trial values as a reader would write them: decimal where that is exact, else a fraction. */
+export function parameterTexts(parameters: ReadonlyMap<string, Rational>): Record<string, string> {
+  return Object.fromEntries(
+    [...parameters].map(([name, value]) => {
+      const decimal = String(toNumber(value));
+      return [name, parseDecimal(decimal)?.equals(value) === true ? decimal : rationalText(value)];
+    }),
+  );
 }

@@ -17,11 +17,9 @@ export function marginUnit({ definition, requirement }: Condition): string | und
 }
 
 function unitText({ hartree, bohr }: Unit): string {
-  const power = (name: string, exponent: number) => (exponent === 1 ? name : `${name}^${String(exponent).replace('-', '−')}`);
-  const parts = [
-    ...(hartree === 0 ? [] : [power('hartree', hartree)]),
-    ...(bohr === 0 ? [] : [power('bohr', bohr)]),
-  ];
+  const power = (name: string, exponent: number) =>
+    exponent === 1 ? name : `${name}^${String(exponent).replace('-', '−')}`;
+  const parts = [...(hartree === 0 ? [] : [power('hartree', hartree)]), ...(bohr === 0 ? [] : [power('bohr', bohr)])];
   return parts.join(' ');
 }
 

@@ -14,16 +14,17 @@ export type Tendency =
   | { readonly kind: 'bounded'; readonly value: number }
   | { readonly kind: 'no-value' };
 
-const digits = 80;
-const distances = ['1e-8', '1e-12', '1e-16'];
-const decadesApart = 4;
+/** Digits of the points on a path. */
+export const pathDigits = 60;
+const distances = ['1e-6', '1e-9', '1e-12'];
+const decadesApart = 3;
 /** Two values that differ by less have settled: a difference that falls as the cube root of the distance still shows. */
 const settled = 2e-3;
 
 /** How each node behaves as a path is followed to its end, from three points close to it in high precision. */
 export function tendencies(graph: Graph, nodes: readonly NodeId[], path: Path): Tendency[] {
-  const context = decimalContext(digits);
-  const rows = distances.map((distance) => evaluateDecimal(graph, nodes, path(context.from(distance)), digits));
+  const context = decimalContext(pathDigits);
+  const rows = distances.map((distance) => evaluateDecimal(graph, nodes, path(context.from(distance)), pathDigits));
   return nodes.map((_, index) => tendency(rows.map((row) => row[index] as Decimal)));
 }
 
@@ -38,7 +39,7 @@ function tendency(values: readonly Decimal[]): Tendency {
     const ratio = third.div(second).abs();
     const power = decimalContext(20).log(ratio).toNumber() / (decadesApart * Math.LN10);
     // A logarithm grows by less and less each time.
-    return { kind: 'diverges', power: power < 0.05 ? 0 : power };
+    return { kind: 'diverges', power: power < 0.1 ? 0 : power };
   }
   return { kind: 'bounded', value };
 }

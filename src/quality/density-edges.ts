@@ -1,6 +1,7 @@
 import { type Decimal, decimalContext } from '../number/decimal.ts';
-import type { DensityName } from './energies.ts';
+import { pathDigits } from './approach.ts';
 import type { Edge } from './edges.ts';
+import type { DensityName } from './energies.ts';
 
 /** How a density is made: r = n↓/n↑ with parallel gradients, and what is added to τ_Wσ in units of n_σ^(5/3). */
 interface Recipe {
@@ -14,7 +15,7 @@ const ratio = '0.5';
 
 /** The density of a recipe, with x, what is beyond τ_W, and the smaller channel multiplied by factors. */
 function densityOf(recipe: Recipe, factors: { x?: Decimal; tau?: Decimal; minority?: Decimal }): Map<string, Decimal> {
-  const context = decimalContext(80);
+  const context = decimalContext(pathDigits);
   const from = (text: string) => context.from(text);
   const scale = (value: Decimal, factor: Decimal | undefined) => (factor === undefined ? value : value.times(factor));
   const up = from(recipe.n);
@@ -41,7 +42,7 @@ function densityOf(recipe: Recipe, factors: { x?: Decimal; tau?: Decimal; minori
 }
 
 const plain: Recipe = { n: '0.2', x: '2', beyondWeizsacker: '3' };
-const zero = decimalContext(80).from('0');
+const zero = decimalContext(pathDigits).from('0');
 
 const inputsOfEmptyChannel: readonly string[] = ['n_dn', 'sigma_dd', 'sigma_ud', 'tau_dn', 'lapl_dn'];
 
@@ -52,30 +53,38 @@ const inputsOfEmptyChannel: readonly string[] = ['n_dn', 'sigma_dd', 'sigma_ud',
 export function densityEdges(variables: readonly string[]): Edge[] {
   const hasGradient = variables.some((name) => name.startsWith('sigma'));
   const hasKinetic = variables.some((name) => name.startsWith('tau'));
-  const edge = (at: Map<string, Decimal>, paths: Edge['paths'], isExempt: Edge['isExempt'] = () => false): Edge => {
+  const edge = (
+    words: string,
+    at: Map<string, Decimal>,
+    paths: Edge['paths'],
+    isExempt: Edge['isExempt'] = () => false,
+  ): Edge => {
     const point = Object.fromEntries([...at].map(([name, value]) => [name, value.toNumber()]));
-    return { point, slice: sliceOf(point), paths, isExempt };
+    return { words, point, slice: sliceOf(point), paths, isExempt };
   };
-  const square = (distance: Decimal) => distance.times(distance);
   const made = (factors: Parameters<typeof densityOf>[1]) => densityOf(plain, factors);
+  // |∇n| goes as the root of the distance, so that σ goes as the distance itself.
+  const flatter = (distance: Decimal) => distance.sqrt();
+  const flat = edge('∇n = 0', made({ x: zero }), [(d) => made({ x: flatter(d) })]);
+  const oneOrbital = edge('τ = τ_W', made({ tau: zero }), [(d) => made({ tau: d })]);
+  const both = edge('∇n = 0 and τ = 0', made({ x: zero, tau: zero }), [
+    (d) => made({ x: flatter(d), tau: d.times(d) }),
+    (d) => made({ x: flatter(d), tau: d }),
+    (d) => made({ x: d, tau: d }),
+  ]);
+  const oneChannel = edge('n↓ = 0', made({ minority: zero }), [(d) => made({ minority: d })], (by) =>
+    by.some((name) => inputsOfEmptyChannel.includes(name)),
+  );
+  const dilute = ['1e-10', '1e-20', '1e-30'].map((n) => edge(`n↑ = ${n}`, densityOf({ ...plain, n }, {}), []));
+  const steep = ['0.2', '1e-20'].map((n) =>
+    edge(`n↑ = ${n}, |∇n↑| = 10⁴ n↑^(4/3)`, densityOf({ ...plain, n, x: '1e4' }, {}), []),
+  );
   return [
-    ...(hasGradient ? [edge(made({ x: zero }), [(d) => made({ x: d })])] : []),
-    ...(hasKinetic ? [edge(made({ tau: zero }), [(d) => made({ tau: d })])] : []),
-    ...(hasKinetic
-      ? [
-          edge(made({ x: zero, tau: zero }), [
-            (d) => made({ x: d, tau: square(d) }),
-            (d) => made({ x: d, tau: d }),
-            (d) => made({ x: square(d), tau: d }),
-          ]),
-        ]
-      : []),
-    edge(made({ minority: zero }), [(d) => made({ minority: d })], (by) =>
-      by.some((name) => inputsOfEmptyChannel.includes(name)),
-    ),
-    ...['1e-10', '1e-20', '1e-30'].map((n) => edge(densityOf({ ...plain, n }, {}), [])),
-    ...(hasGradient ? [edge(densityOf({ ...plain, x: '1e4' }, {}), [])] : []),
-    ...(hasGradient ? [edge(densityOf({ ...plain, n: '1e-20', x: '1e4' }, {}), [])] : []),
+    oneChannel,
+    ...dilute,
+    ...(hasGradient ? [flat, ...steep] : []),
+    ...(hasKinetic ? [oneOrbital] : []),
+    ...(hasGradient && hasKinetic ? [both] : []),
   ];
 }
 

@@ -1,9 +1,11 @@
 import { decimalContext } from '../number/decimal.ts';
-import type { Path } from './approach.ts';
+import { type Path, pathDigits } from './approach.ts';
 import type { SlicePoint } from './rule.ts';
+import { pointWords } from './words.ts';
 
 /** A point of the closed domain at which derivatives are asked for. */
 export interface Edge {
+  readonly words: string;
   readonly point: Readonly<Record<string, number>>;
   /** The same place on the slice. */
   readonly slice: SlicePoint;
@@ -63,6 +65,7 @@ export function sliceEdges(variables: readonly string[]): Edge[] {
       const point = { ...base, ...at };
       const oneChannel = at.zeta !== undefined;
       return {
+        words: pointWords(at),
         point,
         slice: point,
         paths: pathsFrom(point, inside),
@@ -74,22 +77,32 @@ export function sliceEdges(variables: readonly string[]): Edge[] {
     });
   const within = interior.filter(has).map((at): Edge => {
     const point = { ...base, ...at };
-    return { point, slice: point, paths: [], isExempt: () => false };
+    return { words: pointWords(at), point, slice: point, paths: [], isExempt: () => false };
   });
-  return [...atEnds, ...within];
+  const isMild = ({ mildBecause }: Edge) => mildBecause !== undefined;
+  return [...atEnds.filter((edge) => !isMild(edge)), ...within, ...atEnds.filter(isMild)];
 }
+
+/** Powers of the distance by which two coordinates leave their ends. */
+const pacings = [
+  [1, 1],
+  [1, 2],
+  [2, 1],
+];
 
 /** Where several coordinates end at once, they are left at the same pace and each one faster than the others. */
 function pathsFrom(point: Readonly<Record<string, number>>, inside: Changes): Path[] {
-  const context = decimalContext(80);
+  const context = decimalContext(pathDigits);
   const moved = Object.entries(inside);
-  const pacings = moved.length === 1 ? [[1]] : [[1, 1], [1, 2], [2, 1]]; // prettier-ignore
-  return pacings.map((powers): Path => (distance) => {
-    const place = new Map(Object.entries(point).map(([name, value]) => [name, context.from(value)]));
-    moved.forEach(([name, direction], index) => {
-      const step = distance.pow(powers[index] as number).times(direction);
-      place.set(name, context.from(point[name] as number).plus(step));
-    });
-    return place;
-  });
+  return (moved.length === 1 ? [[1]] : pacings).map(
+    (powers): Path =>
+      (distance) => {
+        const place = new Map(Object.entries(point).map(([name, value]) => [name, context.from(value)]));
+        moved.forEach(([name, direction], index) => {
+          const step = distance.pow(powers[index] as number).times(direction);
+          place.set(name, context.from(point[name] as number).plus(step));
+        });
+        return place;
+      },
+  );
 }

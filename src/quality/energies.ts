@@ -42,10 +42,14 @@ type Parameters = ReadonlyMap<string, Rational>;
 /** F_x and F_c on the slice, or F_xc where the sheet gives only their sum. */
 export function sliceEnergies(functional: Functional, parameters: Parameters): EnergyGraph<SliceName> {
   const graph = new Graph();
-  const v = (name: SliceName) => variable(graph, name);
-  const place = slicePlace(graph, { rs: v('rs'), zeta: v('zeta'), s: v('s'), alpha: v('alpha'), q: v('q') });
-  const energies = energiesOf(graph, functional, parameters, place, 'enhancement');
+  const energies = energiesOf(graph, functional, parameters, slicePlaceIn(graph), 'enhancement');
   return { graph, energies, variables: namesIn(sliceNames, graph, energies) };
+}
+
+/** The place whose coordinates are the variables of the slice. */
+export function slicePlaceIn(graph: Graph): Place {
+  const v = (name: SliceName) => variable(graph, name);
+  return slicePlace(graph, { rs: v('rs'), zeta: v('zeta'), s: v('s'), alpha: v('alpha'), q: v('q') });
 }
 
 /** Energies per volume, n ε_x and n ε_c, of spin densities, their gradients and kinetic-energy densities. */

@@ -1,14 +1,14 @@
 import type { Graph } from '../graph/graph.ts';
 import { evaluateDecimal } from '../kernel/decimal.ts';
-import { compileKernel } from '../kernel/float64.ts';
 import { decimalContext } from '../number/decimal.ts';
-import { type Path, type Tendency, tendencies } from './approach.ts';
+import { type Path, pathDigits, type Tendency, tendencies } from './approach.ts';
+import { atPoints } from './at-points.ts';
 import { densityEdges } from './density-edges.ts';
 import { type Edge, sliceEdges } from './edges.ts';
 import { densityEnergies, type EnergyGraph, sliceEnergies } from './energies.ts';
 import { type Derivative, derivativesToSecondOrder } from './partials.ts';
-import type { Rule } from './rule.ts';
-import { derivativeWords, pointWords, shown } from './words.ts';
+import type { Rule, SlicePoint } from './rule.ts';
+import { derivativeWords, shown } from './words.ts';
 
 /** Distances from an edge at which double precision looks for growth. */
 const lookedAt = ['1e-3', '1e-6', '1e-9', '1e-12'];
@@ -17,7 +17,6 @@ const pointDigits = 50;
 
 /** A derivative that has no value at an edge, and why. */
 interface Fault {
-  readonly kind: 'diverges' | 'no-limit';
   readonly derivative: Derivative;
   readonly edge: Edge;
   readonly words: string;
@@ -57,12 +56,15 @@ export const finiteEverywhere: Rule = ({ functional, parameters }) => {
       points: values,
     };
   }
-  const others = [...new Set(faults.slice(1).map(({ derivative }) => derivativeWords(derivative)))];
+  const named = derivativeWords(worst.derivative);
+  const others = [...new Set(faults.map(({ derivative }) => derivativeWords(derivative)))].filter(
+    (one) => one !== named,
+  );
   const also =
     others.length === 0 ? '' : `; also ${others.slice(0, 4).join(', ')}${others.length > 4 ? ' and more' : ''}`;
   return {
     verdict: 'violated',
-    reason: `${worst.words} at ${pointWords(worst.edge.point)}${also}${missed}`,
+    reason: `${worst.words} at ${worst.edge.words}${also}${missed}`,
     margin: null,
     witness: worst.edge.slice,
     points: values,
@@ -72,84 +74,103 @@ export const finiteEverywhere: Rule = ({ functional, parameters }) => {
 
 function missedWords(removable: number, doubleOnly: number): string {
   const parts = [
-    ...(removable > 0 ? [`${removable} exist as limits only`] : []),
-    ...(doubleOnly > 0 ? [`${doubleOnly} exist in high precision but not in double precision`] : []),
+    ...(removable > 0 ? [`${existWords(removable)} as limits only`] : []),
+    ...(doubleOnly > 0 ? [`${existWords(doubleOnly)} in high precision but not in double precision`] : []),
   ];
   return parts.length === 0 ? '' : `; of the finite ones ${parts.join(' and ')}`;
 }
 
+function existWords(count: number): string {
+  return count === 1 ? '1 exists' : `${count} exist`;
+}
+
 /** Faults where electrons are come first, then those of low order. */
 function byWeight(a: Fault, b: Fault): number {
-  const mild = (fault: Fault) => (fault.edge.mildBecause === undefined ? 0 : 1);
-  return mild(a) - mild(b) || a.derivative.by.length - b.derivative.by.length;
+  const weight = ({ edge: { mildBecause, slice } }: Fault) => (mildBecause === undefined && !isFar(slice) ? 0 : 1);
+  return weight(a) - weight(b) || a.derivative.by.length - b.derivative.by.length;
+}
+
+/** Beyond where the densities of atoms, molecules and solids mostly are. */
+function isFar({ rs = 1, s = 0, alpha = 1 }: SlicePoint): boolean {
+  return rs < 0.02 || rs > 10 || s > 3 || alpha > 4;
 }
 
 function look<Name extends string>({ graph, energies, variables }: EnergyGraph<Name>, edges: readonly Edge[]): Looked {
   const derivatives = derivativesToSecondOrder(graph, energies, variables);
-  const atPoints = evaluator(graph, derivatives, variables);
-  const values = atPoints(edges.map(({ point }) => point));
-  const growth = edges.map(({ paths }) => paths.map((path) => atPoints(lookedAt.map((step) => numbersOn(path, step)))));
+  const evaluate = atPoints(
+    graph,
+    derivatives.map(({ node }) => node),
+    variables,
+  );
+  const values = evaluate(edges.map(({ point }) => point));
+  const growth = edges.map(({ paths }) => paths.map((path) => evaluate(lookedAt.map((step) => numbersOn(path, step)))));
   const faults: Fault[] = [];
   let removable = 0;
   let doubleOnly = 0;
   edges.forEach((edge, row) => {
-    const asked = derivatives.map((derivative, index) => ({
-      derivative,
-      missing: !Number.isFinite(values[row]?.[index]),
-      suspicious: (growth[row] ?? []).some((steps) => grows(steps.map((step) => step[index] as number))),
-    }));
-    const doubted = asked.filter((one) => (one.missing || one.suspicious) && !edge.isExempt(one.derivative.by));
-    if (doubted.length === 0) return;
-    const nodes = doubted.map(({ derivative }) => derivative.node);
-    if (edge.paths.length === 0) {
-      const exact = exactly(graph, nodes, edge.point);
-      doubted.forEach(({ derivative }, index) => {
-        if (exact[index]) doubleOnly += 1;
-        else faults.push({ kind: 'no-limit', derivative, edge, words: `${derivativeWords(derivative)} has no value` });
-      });
-      return;
-    }
-    const ways = edge.paths.map((path) => tendencies(graph, nodes, path));
-    doubted.forEach(({ derivative, missing }, index) => {
-      const fault = faultOf(
-        derivative,
-        edge,
-        ways.map((way) => way[index] as Tendency),
-      );
-      if (fault !== undefined) faults.push(fault);
-      else if (missing) removable += 1;
+    const asked = derivatives.flatMap((derivative, index) => {
+      const missing = !Number.isFinite(values[index]?.[row]);
+      const rising = (growth[row] ?? []).some((steps) => grows(steps[index] as Float64Array));
+      return (missing || rising) && !edge.isExempt(derivative.by) ? [{ derivative, missing }] : [];
     });
+    // Where an energy has no value its derivatives have none either; and one place of a fault is enough, the mild last.
+    for (const order of [0, 1, 2]) {
+      const faulty = new Set(faults.filter((fault) => fault.edge === edge).map(({ derivative }) => derivative.symbol));
+      const doubted = asked.filter(
+        ({ derivative }) =>
+          derivative.by.length === order &&
+          !faulty.has(derivative.symbol) &&
+          !faults.some((one) => one.derivative === derivative),
+      );
+      const found = examine(
+        graph,
+        doubted.map(({ derivative }) => derivative),
+        edge,
+      );
+      doubted.forEach(({ missing }, index) => {
+        const fault = found[index];
+        if (fault !== undefined) faults.push(fault);
+        else if (missing && edge.paths.length === 0) doubleOnly += 1;
+        else if (missing) removable += 1;
+      });
+    }
   });
   return { faults, removable, doubleOnly, values: edges.length * derivatives.length };
 }
 
-type PointEvaluator = (points: readonly Readonly<Record<string, number>>[]) => number[][];
-
-/** The derivatives at points in double precision: one row a point. */
-function evaluator(graph: Graph, derivatives: readonly Derivative[], variables: readonly string[]): PointEvaluator {
-  const outputs = derivatives.map(({ node }) => node);
-  const kernel = compileKernel(graph, outputs, [{ variables }]);
-  return (points) => {
-    const columns = variables.map((name) => Float64Array.from(points, (point) => point[name] ?? Number.NaN));
-    const results = outputs.map(() => new Float64Array(points.length));
-    kernel.evaluate([columns], results);
-    return points.map((_, row) => results.map((result) => result[row] as number));
-  };
+/** What high precision says of derivatives at an edge: the fault of each, or undefined where there is none. */
+function examine(graph: Graph, derivatives: readonly Derivative[], edge: Edge): (Fault | undefined)[] {
+  if (derivatives.length === 0) return [];
+  const nodes = derivatives.map(({ node }) => node);
+  if (edge.paths.length > 0) {
+    const ways = edge.paths.map((path) => tendencies(graph, nodes, path));
+    return derivatives.map((derivative, index) =>
+      faultOf(
+        derivative,
+        edge,
+        ways.map((way) => way[index] as Tendency),
+      ),
+    );
+  }
+  const exists = existsAt(graph, nodes, edge.point);
+  return derivatives.map((derivative, index) =>
+    exists[index] ? undefined : { derivative, edge, words: `${derivativeWords(derivative)} has no value` },
+  );
 }
 
 function numbersOn(path: Path, distance: string): Record<string, number> {
-  const place = path(decimalContext(80).from(distance));
+  const place = path(decimalContext(pathDigits).from(distance));
   return Object.fromEntries([...place].map(([name, value]) => [name, value.toNumber()]));
 }
 
 /** Whether values on the way to an edge keep growing, or are lost. */
-function grows(values: readonly number[]): boolean {
-  const [, second, third, fourth] = values.map(Math.abs) as [number, number, number, number];
+function grows(values: Float64Array): boolean {
+  const [, second, third, fourth] = [...values].map(Math.abs) as [number, number, number, number];
   if (!Number.isFinite(fourth)) return true;
   return third > 1.1 * second && fourth > 1.1 * third && fourth > 1e-3;
 }
 
-function exactly(graph: Graph, nodes: readonly number[], point: Readonly<Record<string, number>>): boolean[] {
+function existsAt(graph: Graph, nodes: readonly number[], point: Readonly<Record<string, number>>): boolean[] {
   const context = decimalContext(pointDigits);
   const bindings = new Map(Object.entries(point).map(([name, value]) => [name, context.from(value)]));
   return evaluateDecimal(graph, nodes, bindings, pointDigits).map((value) => value.isFinite());
@@ -159,18 +180,25 @@ function faultOf(derivative: Derivative, edge: Edge, ways: readonly Tendency[]):
   const words = derivativeWords(derivative);
   const diverging = ways.find((way) => way.kind === 'diverges');
   if (diverging?.kind === 'diverges') {
-    const how =
-      diverging.power === 0 ? 'as a logarithm of' : `as the power ${shown(-diverging.power, 2)} of`;
-    return { kind: 'diverges', derivative, edge, words: `${words} grows without bound, ${how} the distance,` };
+    const how = diverging.power === 0 ? 'a logarithm' : `the power −${powerWords(diverging.power)}`;
+    return { derivative, edge, words: `${words} grows without bound, as ${how} of the distance,` };
   }
-  const values = ways.flatMap((way) => (way.kind === 'no-value' ? [] : [way.value]));
-  if (values.length < ways.length) return { kind: 'no-limit', derivative, edge, words: `${words} has no value near by and` };
+  const values = ways.flatMap((way) => ('value' in way ? [way.value] : []));
+  if (values.length < ways.length) return { derivative, edge, words: `${words} has no value, nor any close by,` };
   const [least, most] = [Math.min(...values), Math.max(...values)];
   if (most - least <= 1e-2 * Math.max(1, Math.abs(most))) return undefined;
   return {
-    kind: 'no-limit',
     derivative,
     edge,
     words: `${words} has no limit (${shown(least)} to ${shown(most)}, by the way it is approached)`,
   };
+}
+
+/** A power as the small fraction that it is close to. */
+function powerWords(power: number): string {
+  for (const below of [1, 2, 3, 4, 6]) {
+    const above = Math.round(power * below);
+    if (Math.abs(power - above / below) < 0.02) return below === 1 ? String(above) : `${above}/${below}`;
+  }
+  return shown(power, 2);
 }

@@ -36,7 +36,8 @@ export function pointWords(point: Readonly<Record<string, number | undefined>>):
     .join(', ');
 }
 
-/** A value to so many significant digits. */
+/** A value to so many significant digits; `7.1e-5` rather than `0.000071`. */
 export function shown(value: number, digits = 3): string {
-  return String(Number(value.toPrecision(digits)));
+  const rounded = Number(value.toPrecision(digits));
+  return Math.abs(rounded) < 1e-3 && rounded !== 0 ? rounded.toExponential() : String(rounded);
 }

@@ -9,7 +9,8 @@ const files = {
   semibold: '600SemiBold/SourceSans3_600SemiBold.ttf',
 } as const;
 
-const range = (from: number, to: number) => Array.from({ length: to - from + 1 }, (_, k) => String.fromCodePoint(from + k));
+const range = (from: number, to: number) =>
+  Array.from({ length: to - from + 1 }, (_, k) => String.fromCodePoint(from + k));
 const ascii = range(0x20, 0x7e);
 const letters = [...range(0xa0, 0x17f), ...range(0x391, 0x3a9), ...range(0x3b1, 0x3c9), 'ϕ', 'ϑ', 'ϵ'];
 const signs = [...'–—‘’“”†‡•…′″‹›€∂∆∏∑−∕√∞∫≈≠≤≥←↑→↓↔⁰⁴⁵⁶⁷⁸⁹₀₁₂₃₄₅₆₇₈₉'];
@@ -27,14 +28,24 @@ export function readFaces(readFile: (path: string) => Buffer): Record<string, Re
         const glyph = font.charToGlyph(character);
         if (glyph.index === 0) return [];
         const scale = 1000 / font.unitsPerEm;
-        return [[character, [Math.round((glyph.advanceWidth ?? 0) * scale), ...outline(glyph.getPath(0, 0, 1000).commands)]]];
+        return [
+          [character, [Math.round((glyph.advanceWidth ?? 0) * scale), ...outline(glyph.getPath(0, 0, 1000).commands)]],
+        ];
       });
       return [face, Object.fromEntries(rows)];
     }),
   );
 }
 
-type Command = { readonly type: string; readonly x?: number; readonly y?: number; readonly x1?: number; readonly y1?: number; readonly x2?: number; readonly y2?: number };
+type Command = {
+  readonly type: string;
+  readonly x?: number;
+  readonly y?: number;
+  readonly x1?: number;
+  readonly y1?: number;
+  readonly x2?: number;
+  readonly y2?: number;
+};
 
 function outline(commands: readonly Command[]): [number, number, string] {
   const first = commands[0];

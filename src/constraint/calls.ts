@@ -2,7 +2,8 @@ import type { ConstraintDefinition } from '../definition/constraint.ts';
 import { suggestion } from '../errors/suggest.ts';
 import { builtins } from '../expression/builtins.ts';
 import { childrenOf, type Expression, type Requirement } from '../expression/expression.ts';
-import type { ExpressionFault } from '../expression/parse.ts';
+import type { ExpressionFault } from '../expression/fault.ts';
+import { parseRequirement } from '../expression/parse.ts';
 import { type Rational, rational } from '../number/rational.ts';
 import { coordinatesOf } from './coordinates.ts';
 
@@ -40,6 +41,12 @@ export function kindOf(definition: ConstraintDefinition, { left, right }: Requir
       (part.name === 'coefficient' || (sequenceCalls.includes(part.name) && !isLowDensityLimit(part)))) ||
     childrenOf(part).some(asksForPoints);
   return asksForPoints(left) || asksForPoints(right) ? 'swept' : 'pointwise';
+}
+
+/** Whether a sheet makes a condition that is asked at given points; false for a faulty requirement. */
+export function isAskedAtPoints(definition: ConstraintDefinition): boolean {
+  const requirement = definition.rule === undefined ? parseRequirement(definition.requirement) : undefined;
+  return requirement?.ok === true && kindOf(definition, requirement.value) === 'swept';
 }
 
 function isLowDensityLimit({ name, args }: Call): boolean {
@@ -81,7 +88,12 @@ export function callFault(call: Call, definition: ConstraintDefinition): Express
     const known = [...builtins.keys(), ...requirementCalls.keys()];
     const remedy =
       'A requirement knows d, limit, order, logOrder, coefficient, at, spinscaled and swapped beside the functions of the sheets.';
-    return { code: 'unknown-name', message: `unknown function ${name}`, remedy: suggestion(name, known, remedy), offset };
+    return {
+      code: 'unknown-name',
+      message: `unknown function ${name}`,
+      remedy: suggestion(name, known, remedy),
+      offset,
+    };
   }
   const wrong = (message: string, remedy: string) => ({ code: 'wrong-arguments', message, remedy, offset }) as const;
   if (arity !== args.length) {
@@ -90,17 +102,24 @@ export function callFault(call: Call, definition: ConstraintDefinition): Express
   const coordinates = coordinatesOf(definition.space);
   const along = nameOf(args[1]) ?? '';
   const choices = coordinates.join(', ');
-  if ((name === 'd' || name === 'at') && !coordinates.includes(along)) {
+  const isSeparation = name === 'd' && along === separationName;
+  if ((name === 'd' || name === 'at') && !coordinates.includes(along) && !isSeparation) {
     const form = name === 'd' ? 'd(f, x)' : 'at(f, x, value)';
     const does = name === 'd' ? 'd( , ) differentiates by a coordinate' : 'at( , , ) gives a coordinate another value';
     return wrong(does, `Write ${form} with x one of ${choices}.`);
   }
   if (sequenceCalls.includes(name)) {
     if (!coordinates.includes(along) && along !== separationName) {
-      return wrong(`${name}( , , ) goes along a coordinate`, `Write ${name}(f, x, inf) with x one of ${choices}, omega.`);
+      return wrong(
+        `${name}( , , ) goes along a coordinate`,
+        `Write ${name}(f, x, inf) with x one of ${choices}, omega.`,
+      );
     }
     if (targetOf(args[2]) === undefined) {
-      return wrong(`${name}( , , ) goes to inf or to a number`, `Write ${name}(f, ${along}, inf) or ${name}(f, ${along}, 0).`);
+      return wrong(
+        `${name}( , , ) goes to inf or to a number`,
+        `Write ${name}(f, ${along}, inf) or ${name}(f, ${along}, 0).`,
+      );
     }
   }
   if (name === 'coefficient') return coefficientFault(call, definition, wrong);

@@ -6,7 +6,15 @@ import { type PlacedText, parseExpression, parseRequirement, placedProblem } fro
 import type { Functional } from '../functional/functional.ts';
 import { isPartName } from '../functional/instance.ts';
 import { quantityNames } from '../functional/quantities.ts';
-import { callFault, type ConditionKind, expressionArguments, kindOf, nameOf, sequenceCalls } from './calls.ts';
+import {
+  type ConditionKind,
+  callFault,
+  expressionArguments,
+  kindOf,
+  nameOf,
+  separationName,
+  sequenceCalls,
+} from './calls.ts';
 import { selectableConstants } from './constants.ts';
 import { coordinatesOf } from './coordinates.ts';
 import { readPoints, type SweptPoint } from './points.ts';
@@ -35,6 +43,7 @@ export function readCondition(
   definition: ConstraintDefinition,
   find: (id: string) => Outcome<Functional>,
 ): Outcome<Condition> {
+  if (definition.rule !== undefined) return failure([ruleProblem(definition)]);
   const problems: Problem[] = [];
   const imports = new Map<string, Functional>();
   for (const used of definition.uses) {
@@ -107,6 +116,14 @@ function unplacedProblems(definition: ConstraintDefinition, { left, right }: Req
   );
 }
 
+function ruleProblem({ id }: ConstraintDefinition): Problem {
+  return {
+    code: 'unknown-constraint',
+    message: `${id} is a rule of numerical quality: it has no margin`,
+    remedy: 'Name a condition that has a requirement, or ask for the rule with vet.',
+  };
+}
+
 function constantNames(definition: ConstraintDefinition): string[] {
   return ['pi', ...definition.constants.map(({ name }) => name)];
 }
@@ -117,6 +134,7 @@ function knownNames(definition: ConstraintDefinition): string[] {
     ...constantNames(definition),
     ...(definition.table?.columns.map(({ text }) => text) ?? []),
     ...shareNames,
+    separationName,
     ...energyNames,
     ...coordinatesOf(definition.space),
     ...quantities,

@@ -2,9 +2,11 @@ import type { Finding, SequenceRecord, Verdict } from '../finding/finding.ts';
 import type { Functional } from '../functional/functional.ts';
 import { exactExchangeShares, instantiate } from '../functional/instance.ts';
 import { Graph, type NodeId } from '../graph/graph.ts';
+import { reachable } from '../graph/traverse.ts';
 import { evaluateDecimal } from '../kernel/decimal.ts';
 import { type Decimal, decimalContext } from '../number/decimal.ts';
 import { separationName } from './calls.ts';
+import { withClosedForms } from './closed-forms.ts';
 import type { Condition } from './condition.ts';
 import { coordinatesOf } from './coordinates.ts';
 import { heading, type Settings, witnessAt } from './decide.ts';
@@ -12,14 +14,14 @@ import { gateOf, isRealistic } from './gate.ts';
 import type { Leaves } from './leaves.ts';
 import { limitInFloat64 } from './limit.ts';
 import { buildMargin, type Margin } from './margin.ts';
+import { coefficientRecord, sequenceRecord } from './sequence-record.ts';
 import { type Bindings, type LeafValue, SequenceEvaluator } from './sequences.ts';
-import { sequenceRecord } from './sequence-record.ts';
 
 /** Working digits, and those of a second evaluation that tells which digits are sure. */
-const digits = 50;
-const moreDigits = 80;
+const digits = 40;
+const moreDigits = 60;
 /** More digits than this are not claimed. */
-const mostConfirmed = 40;
+const mostConfirmed = 35;
 
 /** The margin at one point, with what its error comes to. */
 interface PointMargin {
@@ -34,9 +36,9 @@ interface PointMargin {
 export function decideSwept(condition: Condition, functional: Functional, settings: Settings): Finding {
   const { definition } = condition;
   const graph = new Graph();
-  const leaves: Leaves = { found: [], expanded: new Set() };
+  const leaves: Leaves = { found: [], coefficients: [], expanded: new Set() };
   const margin = buildMargin(graph, condition, functional, { ...settings, limit: limitInFloat64, leaves });
-  const evaluator = new SequenceEvaluator(graph, leaves);
+  const evaluator = new SequenceEvaluator(graph, leaves, decimalContext(digits).from(definition.tolerance).div(10));
   const depends = evaluator.coordinatesOf(margin.node);
   const separation = exactExchangeShares(instantiate(graph, functional)).omega;
   const found = pointsOf(margin, depends, separation).map((point) => marginAt(evaluator, margin.node, point));
@@ -56,6 +58,10 @@ export function decideSwept(condition: Condition, functional: Functional, settin
   const witness = witnessAt(condition, witnessPoint, fixed);
   const { gate, reason: gateReason } = gateOf(definition, functional, verdict, isRealistic(witness));
   const value = chosen.margin.toNumber();
+  const records = [
+    ...chosen.leaves.map((leaf): SequenceRecord => sequenceRecord(leaf, chosen.point)),
+    ...coefficientRecords(evaluator, leaves, margin, chosen.point),
+  ];
   return {
     ...heading(condition, functional, settings),
     verdict,
@@ -82,8 +88,37 @@ export function decideSwept(condition: Condition, functional: Functional, settin
       }),
       fixed: Object.fromEntries([...fixed].filter(([name]) => depends.has(name))),
     },
-    sequences: chosen.leaves.map((leaf): SequenceRecord => sequenceRecord(leaf, chosen.point)),
+    ...(settings.neighbourhood === true && { asked: found.map(askedRecord) }),
+    sequences:
+      settings.closedForms === undefined
+        ? records
+        : withClosedForms(records, condition, functional, settings, settings.closedForms),
     reason,
+  };
+}
+
+/** The coefficients that the margin itself consists of; those inside a limit have no value of their own. */
+function coefficientRecords(
+  evaluator: SequenceEvaluator,
+  leaves: Leaves,
+  { graph, node }: Margin,
+  point: Bindings,
+): SequenceRecord[] {
+  const parts = new Set(reachable(graph, [node]));
+  const seen = new Set<string>();
+  return leaves.coefficients.flatMap((coefficient) => {
+    if (!parts.has(coefficient.node) || seen.has(coefficient.text)) return [];
+    seen.add(coefficient.text);
+    if (evaluator.coordinatesOf(coefficient.node).size === 0) return [];
+    return [coefficientRecord(coefficient, evaluator.value(coefficient.node, point, digits), point)];
+  });
+}
+
+function askedRecord({ point, margin }: PointMargin): NonNullable<Finding['asked']>[number] {
+  const value = margin.toNumber();
+  return {
+    at: Object.fromEntries([...point].map(([name, at]) => [name, at.toNumber()])),
+    margin: Number.isFinite(value) ? value : null,
   };
 }
 
@@ -102,9 +137,13 @@ function isAlong(leaves: Leaves, name: string): boolean {
 /** The values of everything that the margin depends on, point by point; points alike in all of that count once. */
 function pointsOf(margin: Margin, depends: ReadonlySet<string>, separation: NodeId | undefined): Bindings[] {
   const { from } = decimalContext(digits);
-  const valueOf = (node: NodeId) => evaluateDecimal(margin.graph, [node], new Map(), digits)[0] as Decimal;
-  const valuesOf = (nodes: ReadonlyMap<string, NodeId>) => [...nodes].map(([name, node]) => [name, valueOf(node)] as const);
-  const fixed = [...valuesOf(margin.fixed), ...(separation === undefined ? [] : [[separationName, valueOf(separation)] as const])];
+  const evaluated = (node: NodeId) => evaluateDecimal(margin.graph, [node], new Map(), digits)[0] as Decimal;
+  const valuesOf = (nodes: ReadonlyMap<string, NodeId>) =>
+    [...nodes].map(([name, node]) => [name, evaluated(node)] as const);
+  const fixed = [
+    ...valuesOf(margin.fixed),
+    ...(separation === undefined ? [] : [[separationName, evaluated(separation)] as const]),
+  ];
   const known = new Map<string, Bindings>();
   for (const point of margin.points) {
     const all = new Map([['q', from(0)] as const, ...fixed, ...valuesOf(point)]);
@@ -147,7 +186,11 @@ function judge(
     return { verdict: 'undecided', chosen: first, reason: `${undecidedReason(first)} (${open.length} of ${counted})` };
   }
   const chosen = lowest(found);
-  return { verdict: 'holds', chosen, reason: `no violation at ${counted}, in high precision${checked(chosen)}; not a proof` };
+  return {
+    verdict: 'holds',
+    chosen,
+    reason: `no violation at ${counted}, in high precision${checked(chosen)}; not a proof`,
+  };
 }
 
 function checked({ leaves }: PointMargin): string {

@@ -1,3 +1,5 @@
+import type { ClosedFormFinder } from '../closed-form/algebra.ts';
+import type { ConstraintDefinition } from '../definition/constraint.ts';
 import type { DomainRecord, Finding, RegionRecord, Verdict, Witness } from '../finding/finding.ts';
 import type { Functional } from '../functional/functional.ts';
 import { Graph } from '../graph/graph.ts';
@@ -5,6 +7,7 @@ import { evaluateDecimal } from '../kernel/decimal.ts';
 import { decimalContext } from '../number/decimal.ts';
 import { type Rational, toNumber } from '../number/rational.ts';
 import type { Interval } from '../search/cross.ts';
+import { gridOf } from '../search/grid.ts';
 import type { Condition } from './condition.ts';
 import { type ConfirmedMargin, makeConfirmer } from './confirm.ts';
 import { spinPlaceOf } from './coordinates.ts';
@@ -20,6 +23,10 @@ export interface Settings {
   readonly constants: ReadonlyMap<string, Rational>;
   /** Trial values for parameters of the functional. */
   readonly parameters: ReadonlyMap<string, Rational>;
+  /** Finds closed forms of limits and coefficients; without it findings have numbers alone. */
+  readonly closedForms?: ClosedFormFinder;
+  /** Whether findings show the margin around their witness. */
+  readonly neighbourhood?: boolean;
 }
 
 /** A margin must be known to so many digits before its sign is believed. */
@@ -72,8 +79,26 @@ export function decide(
     points: evidence.points,
     withoutValue: evidence.withoutValue,
     domain: domainRecord(condition, settings.domain, evidence, fixed),
+    ...(settings.neighbourhood === true && place !== undefined && { neighbourhood: neighbourhoodOf(evidence, place) }),
     reason,
   };
+}
+
+const neighbours = 9;
+
+/** The margin along each axis through a place, at values spread over the axis and at the place itself. */
+function neighbourhoodOf({ axes, at }: Evidence, place: Float64Array): NonNullable<Finding['neighbourhood']> {
+  return axes.map((axis, index) => {
+    const own = place[index] as number;
+    const values = [...new Set([...gridOf(axis, neighbours).values, own])].sort((a, b) => a - b);
+    return {
+      coordinate: axis.name,
+      values: values.map((value) => {
+        const margin = at(place.with(index, value));
+        return { at: value, margin: Number.isFinite(margin) ? margin : null };
+      }),
+    };
+  });
 }
 
 interface Judgement {
@@ -96,6 +121,7 @@ function judge(
       : `no violation at ${points.toLocaleString('en')} points and the local minima among them; not a proof`;
   let roundOff: { value: number; exact: ConfirmedMargin } | undefined;
   let first: { place: Float64Array; confirmed: ConfirmedMargin } | undefined;
+  let unresolved: typeof first;
   for (const { place, value } of candidates) {
     // Once a point without suspicion is reached, the rest are higher still.
     if (first !== undefined && value >= -tolerance) continue;
@@ -113,14 +139,19 @@ function judge(
       };
     }
     if (!isResolved) {
-      return {
-        verdict: 'undecided',
-        place,
-        confirmed,
-        reason: `the margin at the lowest point could not be resolved: only ${confirmed.digits} digits of it are sure`,
-      };
+      unresolved ??= { place, confirmed };
+      continue;
     }
     if (value < -tolerance) roundOff ??= { value, exact: confirmed };
+  }
+  if (unresolved !== undefined) {
+    const { place, confirmed } = unresolved;
+    return {
+      verdict: 'undecided',
+      place,
+      confirmed,
+      reason: `the margin at a low point could not be resolved: only ${confirmed.digits} digits of it are sure`,
+    };
   }
   if (first === undefined) {
     return {
@@ -179,7 +210,7 @@ function throughRecord(evidence: Evidence, place: Float64Array): Finding['throug
 
 /** A finding for a condition that does not apply. */
 export function notApplicableFinding(
-  condition: Condition,
+  condition: { readonly definition: ConstraintDefinition },
   functional: Functional,
   settings: Settings,
   reason: string,
@@ -208,7 +239,11 @@ export function notApplicableFinding(
 }
 
 /** What every finding says of its condition. */
-export function heading({ definition }: Condition, functional: Functional, settings: Settings) {
+export function heading(
+  { definition }: { readonly definition: ConstraintDefinition },
+  functional: Functional,
+  settings: Settings,
+) {
   return {
     constraint: definition.id,
     title: definition.title,

@@ -1,10 +1,12 @@
-import { limitOf } from '../extrapolate/limit.ts';
+import { closeSequences, limitOf } from '../extrapolate/limit.ts';
 import { Decimal, decimalContext } from '../number/decimal.ts';
 
 type Place = readonly (readonly [name: string, value: Decimal])[];
 
 /** Distance at which the neighbourhood of a point is looked at, and what may differ over it. */
-const step = '1e-12';
+const step = '1e-20';
+/** Where the limit is taken instead: well inside the scale on which another variable may compress the function. */
+const close = closeSequences(new Decimal('1e-16'));
 const mayDiffer = '1e-6';
 
 /** Coordinates with no values below the point of expansion. */
@@ -29,7 +31,7 @@ export function approach(f: (place: Place, digits: number) => Decimal, at: Place
   const { from } = decimalContext(digits);
   if (here.isFinite() && sides.every((sign) => agrees(here, near(sign, from(step), digits)))) return here;
   const limits = sides.map((sign) =>
-    limitOf((h, precision) => near(sign, h, precision), { kind: 'value', value: from(0), side: 'above' }),
+    limitOf((h, precision) => near(sign, h, precision), { kind: 'value', value: from(0), side: 'above' }, close),
   );
   const values = limits.map((limit) => (limit.kind === 'finite' ? limit.value : from(Number.NaN)));
   const [first, second = first] = values as [Decimal, Decimal?];

@@ -12,8 +12,8 @@ export function forceOf(definition: ConstraintDefinition, functional: Functional
 /**
  * What a verdict means for the exit status, with the reason in plain words:
  * theorem with a necessary or defining local form → fail; theorem with a sufficient form → warn; conjecture and
- * estimate → note; norm → score; rule → fail inside the realistic box, else warn. A condition that the rung cannot
- * meet together with another, and one with its own gate, say so themselves.
+ * estimate → note; norm → score; rule → fail inside the realistic box, else warn. A condition with
+ * its own gate says so itself; one that the rung cannot meet, together with another, warns instead of failing.
  */
 export function gateOf(
   definition: ConstraintDefinition,
@@ -22,12 +22,21 @@ export function gateOf(
   insideRealisticBox: boolean,
 ): { gate: Gate; reason: string } {
   if (verdict !== 'violated') return { gate: 'pass', reason: passReasons[verdict] };
+  const ordinary = ordinaryGate(definition, functional, insideRealisticBox);
   const { rung } = functional.definition;
   const conflict = definition.cannotMeet.find(({ rungs }) => rungs.includes(rung));
-  if (conflict !== undefined) {
-    const together = conflict.with === undefined ? '' : ` together with ${conflict.with}`;
-    return { gate: 'warn', reason: `a ${rung} cannot meet it${together}: ${conflict.reason}` };
-  }
+  if (conflict === undefined) return ordinary;
+  const together = conflict.with === undefined ? '' : ` together with ${conflict.with}`;
+  const reason = `a ${rung} cannot meet it${together}: ${conflict.reason}`;
+  // What cannot be met is not a failure; it does not become more than it would have been either.
+  return { gate: ordinary.gate === 'fail' ? 'warn' : ordinary.gate, reason };
+}
+
+function ordinaryGate(
+  definition: ConstraintDefinition,
+  functional: Functional,
+  insideRealisticBox: boolean,
+): { gate: Gate; reason: string } {
   if (definition.gate !== undefined) return { gate: definition.gate.level, reason: definition.gate.reason };
   switch (definition.status) {
     case 'theorem':

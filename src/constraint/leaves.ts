@@ -16,9 +16,18 @@ export interface Leaf {
   readonly text: string;
 }
 
+/** A coefficient as the requirement writes it. */
+export interface Coefficient {
+  readonly text: string;
+  readonly node: NodeId;
+  readonly along: string;
+  readonly order: number;
+}
+
 /** What the requirement of a swept condition needs beyond its graph; filled while the graph is built. */
 export interface Leaves {
   readonly found: Leaf[];
+  readonly coefficients: Coefficient[];
   /** Coordinates in which a coefficient is taken, where the formula itself may be 0/0. */
   readonly expanded: Set<string>;
 }
@@ -48,5 +57,7 @@ export function coefficientOf(graph: Graph, leaves: Leaves, call: Call, f: NodeI
     node = differentiate(graph, node, along);
     factorial *= BigInt(k);
   }
-  return mul(graph, constant(graph, rational(1n, factorial)), node);
+  const coefficient = mul(graph, constant(graph, rational(1n, factorial)), node);
+  leaves.coefficients.push({ text: expressionText(call), node: coefficient, along: name, order });
+  return coefficient;
 }

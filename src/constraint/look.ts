@@ -112,7 +112,7 @@ function blockFunctionOf(graph: Graph, node: NodeId, axes: readonly Axis[]): Eva
 }
 
 /** The same minimum at a neater place: coordinates at the end of their axis or with few digits, where that costs nothing. */
-function tidied(at: PointFunction, { place, value }: Spot, axes: readonly Axis[]): Spot {
+export function tidied(at: PointFunction, { place, value }: Spot, axes: readonly Axis[]): Spot {
   const allowed = value + 1e-10 * Math.abs(value);
   const neat = place.slice();
   let lowest = value;

@@ -38,8 +38,12 @@ export interface MarginOptions {
   readonly leaves?: Leaves;
   /** New values for parameters of the functional. */
   readonly parameters?: ReadonlyMap<string, Rational>;
+  /** Nodes for parameters that are to stay symbols. */
+  readonly symbols?: ReadonlyMap<string, NodeId>;
   /** Keeps parameters with printed digits as variables, noted here. */
   readonly printed?: Map<string, PrintedParameter>;
+  /** Another form of each energy, equal to it, to be used in its place; applied before any derivative is taken. */
+  readonly rewrite?: (graph: Graph, energy: NodeId) => NodeId;
 }
 
 /**
@@ -56,6 +60,7 @@ export function buildMargin(
   const instance = instantiate(graph, functional, {
     parameters: new Map([
       ...[...(options.parameters ?? [])].map(([name, value]) => [name, constant(graph, value)] as const),
+      ...(options.symbols ?? []),
       ...(options.leaves === undefined ? [] : separationParameter(graph, functional)),
     ]),
     ...(options.printed && { printed: options.printed }),
@@ -96,7 +101,10 @@ function requirementScope(graph: Graph, condition: Condition, instance: Instance
       if (chosen !== undefined) return constant(graph, options.constants.get(chosen.constant) as Rational);
       if (name === 'exactExchange' || name === 'longRangeExchange') return exactExchangeShares(instance).longRange;
       if (name === 'shortRangeExchange') return exactExchangeShares(instance).shortRange;
-      if (isEnergyName(name)) return energy(instance, name, place);
+      if (isEnergyName(name)) {
+        const own = energy(instance, name, place);
+        return options.rewrite === undefined ? own : options.rewrite(graph, own);
+      }
       const quantity = quantityOf(name);
       if (quantity?.scope === 'total') return place.total(quantity.quantity);
       if (quantity?.suffix === 'up' || quantity?.suffix === 'dn') {

@@ -21,7 +21,9 @@ export function readPoints(
   problems.push(...nameProblems(definition));
   let points: SweptPoint[] = [new Map()];
   if (table !== undefined) {
-    points = table.rows.map((row) => new Map(row.flatMap((cell, index) => entry(table.columns[index]?.text, read(cell)))));
+    points = table.rows.map(
+      (row) => new Map(row.flatMap((cell, index) => entry(table.columns[index]?.text, read(cell)))),
+    );
   }
   for (const { name, values } of sweep) {
     const given = values.map((value) => read(value));

@@ -13,6 +13,8 @@ import { buildMargin } from './margin.ts';
 export interface DigitsCause {
   readonly kind: 'formula' | 'printed-digits';
   readonly text: string;
+  /** The parameter whose rounding matters most. */
+  readonly parameter?: { readonly sheet: string; readonly name: string };
 }
 
 const digits = 40;
@@ -70,6 +72,7 @@ export function causeOfViolation(
   return {
     kind: 'printed-digits',
     text: `it lies within the rounding of the printed parameters: ${parameter.sheet} prints ${parameter.name} = ${value.toString()} to ${parameter.digits} digits (± ${half.toPrecision(1)}), and values within that remove the violation at this point`,
+    parameter: { sheet: parameter.sheet, name: parameter.name },
   };
 }
 

@@ -2,6 +2,7 @@ import type { SequenceRecord } from '../finding/finding.ts';
 import type { Decimal } from '../number/decimal.ts';
 import { rationalText } from '../number/rational.ts';
 import { coordinatesOf } from './coordinates.ts';
+import type { Coefficient } from './leaves.ts';
 import type { Bindings, LeafValue } from './sequences.ts';
 
 /** Digits of the terms, and at most so many of the value. */
@@ -10,18 +11,13 @@ const valueDigits = 20;
 
 /** What was looked at for a limit or an order, as plain data. */
 export function sequenceRecord({ leaf, result, value, error }: LeafValue, point: Bindings): SequenceRecord {
-  const coordinates: readonly string[] = [...coordinatesOf('slice'), ...coordinatesOf('spin')];
   const isKnown = result.kind === 'finite' || result.kind === 'power';
   return {
     quantity: leaf.text,
     kind: leaf.kind,
     along: leaf.along,
     toward: leaf.target === 'infinity' ? 'inf' : rationalText(leaf.target),
-    at: Object.fromEntries(
-      [...point]
-        .filter(([name]) => name !== leaf.along && coordinates.includes(name))
-        .map(([name, at]) => [name, at.toNumber()]),
-    ),
+    at: coordinatesIn(point, leaf.along),
     terms: result.terms.map(({ x, value: term }) => ({ x: shown(x, 6), value: shown(term, termDigits) })),
     value: isKnown ? shown(value, sureDigits(value, error)) : null,
     error: isKnown ? shown(error, 2) : null,
@@ -31,10 +27,40 @@ export function sequenceRecord({ leaf, result, value, error }: LeafValue, point:
   };
 }
 
+/** A coefficient that the margin is made of, as plain data. */
+export function coefficientRecord(
+  { text, along, order }: Coefficient,
+  value: Decimal,
+  point: Bindings,
+): SequenceRecord {
+  return {
+    quantity: text,
+    kind: 'coefficient',
+    along,
+    toward: String(order),
+    at: coordinatesIn(point, ''),
+    terms: [],
+    value: value.isFinite() ? shown(value, valueDigits) : null,
+    error: null,
+    second: null,
+    closedForm: null,
+    note: value.isFinite() ? '' : 'no value there, or different ones from two sides',
+  };
+}
+
+function coordinatesIn(point: Bindings, along: string): Record<string, number> {
+  const coordinates: readonly string[] = [...coordinatesOf('slice'), ...coordinatesOf('spin')];
+  return Object.fromEntries(
+    [...point]
+      .filter(([name]) => name !== along && coordinates.includes(name))
+      .map(([name, at]) => [name, at.toNumber()]),
+  );
+}
+
 function noteOf(result: LeafValue['result']): string {
   switch (result.kind) {
     case 'infinite':
-      return `no finite limit: it ${result.sign > 0 ? 'grows' : 'falls'} as a ${result.growth} does`;
+      return `no finite limit, it ${result.sign > 0 ? 'grows' : 'falls'} as a ${result.growth} does`;
     case 'vanishing':
       return 'it falls faster than any power';
     case 'unknown':

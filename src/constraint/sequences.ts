@@ -1,5 +1,5 @@
 import { type GrowthResult, growthOf } from '../extrapolate/growth.ts';
-import { type LimitResult, limitOf } from '../extrapolate/limit.ts';
+import { closeSequences, type LimitResult, limitOf, ordinarySequences, outerSequences } from '../extrapolate/limit.ts';
 import type { DecimalFunction, Target } from '../extrapolate/sequence.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { variablesOf } from '../graph/traverse.ts';
@@ -23,11 +23,14 @@ export interface LeafValue {
 export class SequenceEvaluator {
   readonly #graph: Graph;
   readonly #leaves: Leaves;
+  readonly #resolution: Decimal;
   readonly #known = new Map<string, LeafValue>();
 
-  constructor(graph: Graph, leaves: Leaves) {
+  /** Limits are wanted to `resolution` only; a drift that stays below it over all of a sequence does not matter. */
+  constructor(graph: Graph, leaves: Leaves, resolution: Decimal) {
     this.#graph = graph;
     this.#leaves = leaves;
+    this.#resolution = resolution;
   }
 
   /** The limits and orders that a node contains itself, innermost left out. */
@@ -47,7 +50,7 @@ export class SequenceEvaluator {
 
   /** A node at a point, with the values of the limits in it given. */
   value(node: NodeId, point: Bindings, digits: number): Decimal {
-    return this.#line(node, point, new Set())(new Map(), digits);
+    return this.#line(node, point)(new Map(), digits);
   }
 
   /** A limit or an order at a point. */
@@ -56,19 +59,23 @@ export class SequenceEvaluator {
     const key = `${leaf.symbol} ${needed.map((name) => `${name}=${point.get(name)}`).join(' ')}`;
     const known = this.#known.get(key);
     if (known !== undefined) return known;
-    const found = this.#resolve(leaf, point);
+    const found = this.#resolve(leaf, point, undefined);
     this.#known.set(key, found);
     return found;
   }
 
-  #resolve(leaf: Leaf, point: Bindings): LeafValue {
-    const line = this.#line(leaf.of, point, new Set([leaf.along]));
+  /** `within`: the distance from its target at which another limit stands that this one is inside of. */
+  #resolve(leaf: Leaf, point: Bindings, within: Decimal | undefined): LeafValue {
+    const line = this.#line(leaf.of, point, leaf);
     const f: DecimalFunction = (x, digits) => line(new Map([[leaf.along, x]]), digits);
     const target = targetFor(leaf);
     const { from } = decimalContext(50);
     const none = { value: from(Number.NaN), error: from(0) };
     if (leaf.kind === 'limit') {
-      const result = limitOf(f, target);
+      const isOuter = this.#movedLeaves(leaf.of, point, leaf.along).length > 0;
+      const alone = isOuter ? outerSequences : ordinarySequences;
+      const sequences = within === undefined ? alone : closeSequences(within.pow(4));
+      const result = limitOf(f, target, { ...sequences, resolution: this.#resolution });
       if (result.kind === 'finite') return { leaf, result, value: result.value, error: result.error };
       if (result.kind === 'unknown') return { leaf, result, ...none };
       return { leaf, result, value: from(result.sign * Number.POSITIVE_INFINITY), error: from(0) };
@@ -84,27 +91,44 @@ export class SequenceEvaluator {
       : { leaf, result, value: result.logPower, error: result.logError };
   }
 
-  /** A node along some moving variables; the limits in it are taken anew where they depend on one that moves. */
-  #line(node: NodeId, point: Bindings, moving: ReadonlySet<string>) {
-    const inner = this.leavesOf(node).filter(({ symbol }) => !point.has(symbol));
+  /** The limits in a node that change when a variable moves. */
+  #movedLeaves(node: NodeId, point: Bindings, along: string): Leaf[] {
+    return this.leavesOf(node).filter(
+      ({ symbol, of, along: inner }) => !point.has(symbol) && inner !== along && this.coordinatesOf(of).has(along),
+    );
+  }
+
+  /** A node at a point, or along the variable of a limit; limits in it are taken anew where they depend on that. */
+  #line(node: NodeId, point: Bindings, outer?: Leaf) {
+    const moved = outer === undefined ? [] : this.#movedLeaves(node, point, outer.along);
     const still = new Map(point);
-    const moved: Leaf[] = [];
-    for (const leaf of inner) {
-      const depends = [...this.coordinatesOf(leaf.of)].some((name) => name !== leaf.along && moving.has(name));
-      if (depends) moved.push(leaf);
-      else still.set(leaf.symbol, this.leaf(leaf, point).value);
+    for (const leaf of this.leavesOf(node)) {
+      if (!still.has(leaf.symbol) && !moved.includes(leaf)) still.set(leaf.symbol, this.leaf(leaf, point).value);
     }
-    const expanded = [...this.#leaves.expanded].filter((name) => point.has(name) && !moving.has(name));
-    const all = new Set([...moving, ...moved.map(({ symbol }) => symbol), ...expanded]);
-    const direct = decimalLine(this.#graph, node, still, all);
+    const expanded = [...this.#leaves.expanded].filter((name) => point.has(name) && name !== outer?.along);
+    const moving = [...moved.map(({ symbol }) => symbol), ...expanded];
+    const direct = decimalLine(
+      this.#graph,
+      node,
+      still,
+      new Set(outer === undefined ? moving : [outer.along, ...moving]),
+    );
     const at = expanded.map((name) => [name, point.get(name) as Decimal] as const);
     return (values: Bindings, digits: number): Decimal => {
       const here = new Map(values);
-      for (const leaf of moved) here.set(leaf.symbol, this.leaf(leaf, new Map([...point, ...values])).value);
+      for (const leaf of moved) {
+        const h = distance(outer as Leaf, values.get((outer as Leaf).along) as Decimal);
+        here.set(leaf.symbol, this.#resolve(leaf, new Map([...point, ...values]), h).value);
+      }
       if (at.length === 0) return direct(here, digits);
-      return approach((place, at) => direct(new Map([...here, ...place]), at), at, digits);
+      return approach((place, precision) => direct(new Map([...here, ...place]), precision), at, digits);
     };
   }
+}
+
+function distance(leaf: Leaf, x: Decimal): Decimal {
+  if (leaf.target === 'infinity') return x.pow(-1);
+  return x.minus(decimalContext(50).fromRational(leaf.target)).abs();
 }
 
 /** A coordinate comes to its end from inside: ζ to 1 from below, everything else from above. */

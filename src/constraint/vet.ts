@@ -6,9 +6,11 @@ import { constant } from '../graph/build.ts';
 import { Graph, type NodeId } from '../graph/graph.ts';
 import { evaluateDecimal } from '../kernel/decimal.ts';
 import { type Rational, rationalText } from '../number/rational.ts';
-import { notApplicable } from './applicable.ts';
+import { notApplicable, rungReason } from './applicable.ts';
 import type { Condition } from './condition.ts';
+import type { Constraint, RuleCondition } from './constraint.ts';
 import { decide, notApplicableFinding, type Settings } from './decide.ts';
+import { decideRule } from './decide-rule.ts';
 import { decideSwept } from './decide-swept.ts';
 import { axesOf, type Domain } from './domain.ts';
 import { limitInFloat64 } from './limit.ts';
@@ -19,15 +21,16 @@ import { buildMargin, type Margin } from './margin.ts';
 export type Progress = (subject: string, points: number) => void;
 
 /**
- * Vets one functional against conditions: one finding for each, in their order. Margins over the same coordinates are
+ * Vets one functional against conditions and rules: one finding for each, in their order. Margins over the same coordinates are
  * looked at together, in one pass over their grid.
  */
 export function vetFunctional(
   functional: Functional,
-  conditions: readonly Condition[],
+  constraints: readonly Constraint[],
   settings: Settings,
   onProgress: Progress = () => {},
 ): FunctionalFindings {
+  const conditions = constraints.filter((one): one is Condition => one.kind !== 'rule');
   const graph = new Graph();
   const findings = new Map<Condition, Finding>();
   const margins = new Map<Condition, Margin>();
@@ -51,6 +54,7 @@ export function vetFunctional(
       onProgress(functional.definition.id, 0);
     });
   }
+  const ofRules = rulesAsked(constraints, functional, settings, onProgress);
   return {
     id: functional.definition.id,
     name: functional.definition.name,
@@ -60,8 +64,28 @@ export function vetFunctional(
     parameters: Object.fromEntries([...settings.parameters].map(([name, value]) => [name, rationalText(value)])),
     sheetHash: createHash('sha256').update(functional.definition.text).digest('hex'),
     domain: domainSummary(settings.domain),
-    findings: conditions.map((condition) => findings.get(condition) as Finding),
+    findings: constraints.map((one) => (one.kind === 'rule' ? ofRules.get(one) : findings.get(one)) as Finding),
   };
+}
+
+function rulesAsked(
+  constraints: readonly Constraint[],
+  functional: Functional,
+  settings: Settings,
+  onProgress: Progress,
+): Map<RuleCondition, Finding> {
+  const asked = constraints.filter((one): one is RuleCondition => one.kind === 'rule');
+  return new Map(
+    asked.map((rule) => {
+      const reason = rungReason(rule.definition, functional);
+      const finding =
+        reason === undefined
+          ? decideRule(rule, functional, settings)
+          : notApplicableFinding(rule, functional, settings, reason);
+      onProgress(functional.definition.id, finding.points);
+      return [rule, finding];
+    }),
+  );
 }
 
 /** Conditions whose margins depend on the same coordinates of the same space. */

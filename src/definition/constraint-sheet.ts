@@ -19,10 +19,17 @@ export const ruleNames = [
 
 const rungs = z.array(z.enum(['lda', 'gga', 'meta-gga'])).min(1, { error: 'a list with at least one rung' });
 const coordinate = expressionField('a decimal number or an expression').optional();
-const valueList = z
-  .array(expressionField('a decimal number or an expression'), { error: 'a list of values' })
-  .min(1, { error: 'a list with at least one value' })
-  .optional();
+const valueList = (what: string) =>
+  z
+    .array(expressionField('a decimal number or an expression'), { error: 'a list of values' })
+    .min(1, { error: 'a list with at least one value' })
+    .optional()
+    .meta({ description: `Values of ${what}.` });
+const forceFor = (whom: string) =>
+  z
+    .enum(forces)
+    .optional()
+    .meta({ description: `Force ${whom}.` });
 
 const conflict = z.strictObject({
   rungs: rungs.meta({ description: 'Rungs that cannot meet both conditions.' }),
@@ -48,10 +55,10 @@ export const constraintSheet = z
     force: z.enum(forces).meta({ description: 'What a local violation means for the statement.' }),
     'force-for': z
       .strictObject({
-        lda: z.enum(forces).optional(),
-        gga: z.enum(forces).optional(),
-        'meta-gga': z.enum(forces).optional(),
-        hybrid: z.enum(forces).optional(),
+        lda: forceFor('of an LDA'),
+        gga: forceFor('of a GGA'),
+        'meta-gga': forceFor('of a meta-GGA'),
+        hybrid: forceFor('of a functional with exact exchange'),
       })
       .optional()
       .meta({ description: 'Force for one rung, or for functionals with exact exchange, where it differs.' }),
@@ -75,18 +82,33 @@ export const constraintSheet = z
       .optional()
       .meta({ description: 'Coordinates with a fixed value.' }),
     sweep: z
-      .strictObject({ rs: valueList, zeta: valueList, s: valueList, alpha: valueList, q: valueList })
-      .optional()
-      .meta({ description: 'Coordinates with a list of values, all combined: the condition is asked at these points.' }),
-    table: z
       .strictObject({
-        columns: z.array(nameField()).min(1, { error: 'a list with at least one name' }),
-        rows: z
-          .array(z.array(expressionField('a decimal number or an expression'), { error: 'a list of values' }))
-          .min(1, { error: 'a list with at least one row' }),
+        rs: valueList('the Wigner-Seitz radius'),
+        zeta: valueList('the polarisation'),
+        s: valueList('the reduced gradient'),
+        alpha: valueList('the iso-orbital indicator'),
+        q: valueList('the reduced Laplacian'),
       })
       .optional()
-      .meta({ description: 'Points and data: columns named after coordinates give the points, others are names for the requirement.' }),
+      .meta({
+        description: 'Coordinates with a list of values, all combined: the condition is asked at these points.',
+      }),
+    table: z
+      .strictObject({
+        columns: z
+          .array(nameField())
+          .min(1, { error: 'a list with at least one name' })
+          .meta({ description: 'Names of the columns.' }),
+        rows: z
+          .array(z.array(expressionField('a decimal number or an expression'), { error: 'a list of values' }))
+          .min(1, { error: 'a list with at least one row' })
+          .meta({ description: 'Lists of values, one for each column.' }),
+      })
+      .optional()
+      .meta({
+        description:
+          'Points and data: columns named after coordinates give the points, others are names for the requirement.',
+      }),
     uses: usesField().optional(),
     constants: z
       .record(nameField(), idField('the name of a selectable constant'))
@@ -95,10 +117,9 @@ export const constraintSheet = z
     requirement: expressionField('a comparison of two expressions').optional().meta({
       description: 'left >= right, left <= right or left == right, in Fx, Fc, Fxc, d(f, rs), limit(f, rs, inf) ….',
     }),
-    rule: z
-      .enum(ruleNames)
-      .optional()
-      .meta({ description: 'Instead of a requirement: a rule of numerical quality, of which tolerance is the threshold.' }),
+    rule: z.enum(ruleNames).optional().meta({
+      description: 'Instead of a requirement: a rule of numerical quality, of which tolerance is the threshold.',
+    }),
     relative: yesNoField().optional().meta({ description: 'For ==: compare relative to the right-hand side.' }),
     tolerance: nonNegativeField().meta({ description: 'Largest margin below zero that is still accepted.' }),
     'tolerance-reason': textField().optional().meta({ description: 'Why this tolerance.' }),
@@ -110,5 +131,6 @@ export const constraintSheet = z
   .meta({
     title: 'Constraint sheet',
     description: 'An exact condition on an exchange-correlation functional.',
+    oneOf: [{ required: ['requirement'] }, { required: ['rule'] }],
     dependentRequired: { gate: ['gate-reason'], 'gate-reason': ['gate'] },
   });

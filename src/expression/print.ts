@@ -1,7 +1,11 @@
 import { rationalText } from '../number/rational.ts';
 import type { Expression } from './expression.ts';
 
-/** The expression as text, with every sum and product inside an operation in parentheses. */
+/** Binding strength of the forms that may need parentheses. */
+const strengths = { '+': 1, '-': 1, '*': 2, '/': 2, '^': 4 } as const;
+const strengthOfSign = 3;
+
+/** The expression as text in the notation of the sheets. */
 export function expressionText(expression: Expression): string {
   switch (expression.kind) {
     case 'number':
@@ -15,21 +19,40 @@ export function expressionText(expression: Expression): string {
     case 'member-call':
       return `${expression.object}.${expression.name}(${expression.args.map(expressionText).join(', ')})`;
     case 'negation':
-      return `-${operandText(expression.operand)}`;
+      return `-${operandText(expression.operand, strengthOfSign + 1)}`;
     case 'arithmetic': {
-      const space = expression.op === '+' || expression.op === '-' ? ' ' : '';
-      return `${operandText(expression.left)}${space}${expression.op}${space}${operandText(expression.right)}`;
+      const { op, left, right } = expression;
+      const own = strengths[op];
+      const space = own === 1 ? ' ' : '';
+      // Everything but a power joins from the left.
+      const [leastLeft, leastRight] = op === '^' ? [own + 1, own] : [own, own + 1];
+      return `${operandText(left, leastLeft)}${space}${op}${space}${operandText(right, leastRight)}`;
     }
     case 'conditional': {
       const { left, right, comparison, whenTrue, whenFalse } = expression;
-      const test = `${operandText(left)} ${comparison} ${operandText(right)}`;
-      return `${test} ? ${operandText(whenTrue)} : ${operandText(whenFalse)}`;
+      const test = `${operandText(left, 1)} ${comparison} ${operandText(right, 1)}`;
+      return `${test} ? ${operandText(whenTrue, 1)} : ${operandText(whenFalse, 1)}`;
     }
   }
 }
 
-function operandText(expression: Expression): string {
+function operandText(expression: Expression, least: number): string {
   const text = expressionText(expression);
-  const isSimple = expression.kind !== 'arithmetic' && expression.kind !== 'conditional';
-  return isSimple ? text : `(${text})`;
+  return strengthOf(expression) >= least ? text : `(${text})`;
+}
+
+function strengthOf(expression: Expression): number {
+  switch (expression.kind) {
+    case 'arithmetic':
+      return strengths[expression.op];
+    case 'negation':
+      return strengthOfSign;
+    case 'conditional':
+      return 0;
+    case 'number':
+      // A number that is no integer prints as a quotient, a negative one with a sign.
+      return expression.value.d !== 1n ? strengths['/'] : expression.value.s < 0n ? strengthOfSign : 5;
+    default:
+      return 5;
+  }
 }

@@ -26,7 +26,8 @@ export function shanks(terms: readonly Decimal[], noise: Decimal): Estimate {
     }
     before = column;
     column = next;
-    if (index % 2 === 0) best = smaller(best, column.length > 1 ? lastOf(column) : alone(column[0] as Decimal, best.value));
+    if (index % 2 === 0)
+      best = smaller(best, column.length > 1 ? lastOf(column) : alone(column[0] as Decimal, best.value));
   }
   return best;
 }

@@ -54,9 +54,9 @@ export type RegionRecord = z.infer<typeof regionSchema>;
 /** What was looked at to find a limit, an order of growth or a coefficient that is not pointwise. */
 export const sequenceSchema = z.strictObject({
   quantity: z.string().describe('as the requirement writes it'),
-  kind: z.enum(['limit', 'order', 'logOrder']),
-  along: z.string().describe('the variable that moves'),
-  toward: z.string().describe('inf or a number'),
+  kind: z.enum(['limit', 'order', 'logOrder', 'coefficient']),
+  along: z.string().describe('the variable that moves, or that is expanded in'),
+  toward: z.string().describe('inf or a number; of a coefficient its order'),
   at: z.record(z.string(), z.number()).describe('the other coordinates'),
   terms: z.array(z.strictObject({ x: z.string(), value: z.string() })),
   value: z.string().nullable().describe('extrapolated; null where it could not be told'),
@@ -66,6 +66,28 @@ export const sequenceSchema = z.strictObject({
   note: z.string(),
 });
 export type SequenceRecord = z.infer<typeof sequenceSchema>;
+
+/** What branch and bound with interval arithmetic could decide. */
+export const proofSchema = z.strictObject({
+  boxes: z.int().describe('boxes looked at'),
+  deepest: z.int().describe('halvings that led to the smallest box'),
+  stop: z
+    .enum(['decided', 'budget', 'resolution', 'not-provable'])
+    .describe(
+      'why it ended: all decided, the budget of boxes spent, boxes too small to divide, or no claim about boxes',
+    ),
+  provedShare: z.number().describe('share of the domain on which it is proved to hold'),
+  violatedShare: z.number().describe('share on which it is proved to be violated'),
+  undecidedShare: z.number(),
+  undecidedWords: z.string().describe('where the undecided boxes lie; empty when there are none'),
+  violatedWords: z.string().describe('where the boxes proved to violate lie'),
+  certifiedAtWitness: z
+    .boolean()
+    .describe('of a violation: an interval evaluation at the witness lies wholly below minus the tolerance'),
+  rewrites: z.array(z.string()).describe('exact rewrites of the formula that were used'),
+  reason: z.string(),
+});
+export type ProofRecord = z.infer<typeof proofSchema>;
 
 export const findingSchema = z.strictObject({
   constraint: z.string(),
@@ -107,7 +129,25 @@ export const findingSchema = z.strictObject({
   withoutValue: z.int(),
   domain: domainSchema,
   constants: z.record(z.string(), z.number()),
-  sequences: z.array(sequenceSchema).optional().describe('of a condition asked at points: how it was found at the worst one'),
+  neighbourhood: z
+    .array(
+      z.strictObject({
+        coordinate: z.string(),
+        values: z.array(z.strictObject({ at: z.number(), margin: z.number().nullable() })),
+      }),
+    )
+    .optional()
+    .describe('the margin along each coordinate through the witness, where it was asked for'),
+  asked: z
+    .array(z.strictObject({ at: z.record(z.string(), z.number()), margin: z.number().nullable() }))
+    .optional()
+    .describe('of a condition asked at points: the margin at each, where it was asked for'),
+  sequences: z
+    .array(sequenceSchema)
+    .optional()
+    .describe('of a condition asked at points: how it was found at the worst one'),
+  proof: proofSchema.optional().describe('where a proof was asked for'),
+  rule: z.literal(true).optional().describe('decided by a rule of numerical quality; reason tells what was found'),
   reason: z.string(),
 });
 export type Finding = z.infer<typeof findingSchema>;

@@ -8,7 +8,7 @@ export interface FindingCounts {
 
 export function countFindings(findings: readonly Finding[]): FindingCounts {
   const verdicts: Record<Verdict, number> = { proved: 0, holds: 0, violated: 0, undecided: 0, 'not-applicable': 0 };
-  const gates: Record<Gate, number> = { fail: 0, warn: 0, note: 0, score: 0, pass: 0 };
+  const gates: Record<Gate, number> = { fail: 0, warn: 0, note: 0, score: 0, accepted: 0, pass: 0 };
   for (const { verdict, gate } of findings) {
     verdicts[verdict]++;
     gates[gate]++;

@@ -3,7 +3,7 @@ import type { DomainRecord, Finding } from './finding.ts';
 /** A coordinate of a picture: its values rise, both ends included. */
 export interface PictureAxis {
   readonly name: string;
-  readonly scale: DomainRecord['coordinates'][number]['scale'];
+  readonly scale: 'linear' | 'logarithmic' | 'toward-upper' | 'compact';
   readonly values: readonly number[];
 }
 
@@ -31,6 +31,8 @@ export interface MapPanel {
   readonly worstAt: Readonly<Record<string, readonly number[]>>;
   /** The lowest margin, found on the grid and followed to the local minimum; null where nothing has a value. */
   readonly lowest: { readonly margin: number; readonly point: Readonly<Record<string, number>> } | null;
+  /** The violated region as closed rings of places (x, y), holes among them. */
+  readonly region: readonly (readonly (readonly [x: number, y: number])[])[];
   /** Cells below minus the tolerance. */
   readonly violatedCells: number;
   /** Points at which the margin was evaluated. */

@@ -3,7 +3,6 @@ import type { Expression } from '../expression/expression.ts';
 import { interpret, type Scope } from '../expression/interpret.ts';
 import { constant, variable } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
-import type { Rational } from '../number/rational.ts';
 import type { Frame, Instance, PartEnergy } from './frame.ts';
 import type { ExactExchange, Functional } from './functional.ts';
 import { partEnergy, spinSum } from './part.ts';
@@ -179,10 +178,6 @@ export function exactExchangeShares(instance: Instance): { shortRange: NodeId; l
 
 export function isPartName(name: string): name is PartName {
   return name === 'exchange' || name === 'correlation' || name === 'exchange-correlation';
-}
-
-export function parameterOverrides(graph: Graph, values: ReadonlyMap<string, Rational>): Map<string, NodeId> {
-  return new Map([...values].map(([name, value]) => [name, constant(graph, value)]));
 }
 
 function quantity(name: string, frame: Frame): NodeId | undefined {

@@ -1,5 +1,5 @@
-import { type Condition, readCondition } from '../../src/constraint/condition.ts';
 import { constantValues } from '../../src/constraint/constants.ts';
+import { type Constraint, readConstraint } from '../../src/constraint/constraint.ts';
 import type { Settings } from '../../src/constraint/decide.ts';
 import { standardDomain } from '../../src/constraint/domain.ts';
 import type { Functional } from '../../src/functional/functional.ts';
@@ -20,10 +20,10 @@ export function functionalOf(idOrPath: string): Functional {
   return outcome.value;
 }
 
-export function conditionOf(id: string): Condition {
+export function conditionOf(id: string): Constraint {
   const definition = shelf.constraint(id);
   if (!definition.ok) throw new Error(JSON.stringify(definition.problems, null, 1));
-  const condition = readCondition(definition.value, (sheet) => shelf.functional(sheet));
+  const condition = readConstraint(definition.value, (sheet) => shelf.functional(sheet));
   if (!condition.ok) throw new Error(JSON.stringify(condition.problems, null, 1));
   return condition.value;
 }

@@ -42,12 +42,33 @@ describe('a constraint sheet', () => {
       relative: true,
       tolerance: 1e-9,
       toleranceReason: 'round-off',
-      exclude: [{ when: { text: 's == 0' }, reason: '0/0' }],
+      sweep: [{ name: 'rs', values: [{ text: '1' }, { text: '10' }] }],
+      table: {
+        columns: [{ text: 's' }, { text: 'value' }],
+        rows: [
+          [{ text: '0' }, { text: '1' }],
+          [{ text: '1' }, { text: '1/2' }],
+        ],
+      },
       cannotMeet: [{ rungs: ['lda', 'gga'], with: 'correlation-uniform-gas', reason: 'known' }],
-      holds: [{ id: 'pbe', place: { line: 22, column: 9 } }],
+      holds: [{ id: 'pbe', place: { line: 23, column: 9 } }],
       breaks: [{ id: 'lyp', where: 's > 1', source: 'somebody' }],
       traps: ['one', 'two'],
     });
+  });
+
+  test('names a rule in the place of a requirement', () => {
+    const sheet = acceptedValue(parse(necessary.replace('requirement: Fx >= 0', 'rule: digits-lost')));
+    expect(sheet).toMatchObject({ rule: 'digits-lost', requirement: { text: 'digits-lost' } });
+    expect(problemsOf(parse(necessary.replace('requirement: Fx >= 0\n', '')))).toEqual([
+      '1:1 missing-key the sheet has no requirement',
+    ]);
+    expect(problemsOf(parse(`${necessary}rule: digits-lost\n`))).toEqual([
+      '10:1 duplicate-key the sheet has a requirement and a rule',
+    ]);
+    expect(problemsOf(parse(necessary.replace('requirement: Fx >= 0', 'rule: digit-lost')))).toEqual([
+      expect.stringMatching(/^8:7 wrong-value rule must be one of /),
+    ]);
   });
 
   test('with the necessary keys alone is about the slice, absolute and without gate', () => {

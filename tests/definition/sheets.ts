@@ -53,7 +53,8 @@ requirement: d(Fc, rs) >= 0
 relative: true
 tolerance: 1e-9
 tolerance-reason: round-off
-exclude: [{ when: "s == 0", reason: 0/0 }]
+sweep: { rs: [1, 10] }
+table: { columns: [s, value], rows: [[0, 1], [1, 1/2]] }
 cannot-meet: [{ rungs: [lda, gga], with: correlation-uniform-gas, reason: known }]
 holds: [pbe]
 breaks: [{ id: lyp, where: "s > 1", source: somebody }]

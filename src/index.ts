@@ -5,6 +5,7 @@
  */
 export { type Condition, readCondition } from './constraint/condition.ts';
 export { constantValues, type SelectableConstant, selectableConstants } from './constraint/constants.ts';
+export { type Constraint, readConstraint } from './constraint/constraint.ts';
 export type { Settings } from './constraint/decide.ts';
 export { customDomain, type Domain, standardDomain, wideDomain } from './constraint/domain.ts';
 export { type Progress, vetFunctional } from './constraint/vet.ts';
@@ -16,4 +17,5 @@ export { evaluatePoints, type PointsAnswer, type PointsRequest } from './evaluat
 export { type Finding, type Findings, type FunctionalFindings, findingsJsonSchema } from './finding/finding.ts';
 export type { Functional } from './functional/functional.ts';
 export { linkFunctional } from './functional/link.ts';
-export { openShelf, type Shelf, type ShelfFolders } from './shelf/shelf.ts';
+export type { ShelfFolders } from './shelf/sheet-files.ts';
+export { openShelf, type Shelf } from './shelf/shelf.ts';

@@ -1,15 +1,10 @@
-import { createHash } from 'node:crypto';
-import { existsSync, statSync } from 'node:fs';
-import { join } from 'node:path';
+import { isAskedAtPoints } from '../constraint/calls.ts';
 import { type Condition, readCondition } from '../constraint/condition.ts';
-import { constantValues, selectableConstants } from '../constraint/constants.ts';
-import { axesOf, type Domain, standardDomain } from '../constraint/domain.ts';
-import { vetFunctional } from '../constraint/vet.ts';
+import { selectableConstants } from '../constraint/constants.ts';
+import { axesOf, standardDomain } from '../constraint/domain.ts';
 import type { ConstraintDefinition } from '../definition/constraint.ts';
 import type { FunctionalDefinition } from '../definition/functional.ts';
-import { failure, type Outcome, type Problem, ProblemError, success } from '../errors/problem.ts';
-import { suggestion } from '../errors/suggest.ts';
-import type { Findings } from '../finding/finding.ts';
+import { failure, type Outcome, type Problem, success } from '../errors/problem.ts';
 import type { Functional } from '../functional/functional.ts';
 import type { Rational } from '../number/rational.ts';
 import type { Explanation } from '../report/explain.ts';
@@ -17,40 +12,32 @@ import type { ListedConstraint, ListedFunctional } from '../report/list.ts';
 import { shortText } from '../report/number-text.ts';
 import { coordinateSymbol } from '../report/symbols.ts';
 import { domainWords } from '../report/words.ts';
+import { unknownParameters } from '../run/vetter.ts';
 import { openShelf, type Shelf } from '../shelf/shelf.ts';
+import { catalogueFolders, hintAtOwnSheet } from './catalogue.ts';
 import type { GivenValue } from './options.ts';
-import { packageRoot, packageVersion } from './package-root.ts';
+import { settle } from './problems.ts';
 
 /** The sheets that come with the program, behind those of the user's own constraint folders. */
 export function openCatalogue(constraintFolders: readonly string[]): Shelf {
-  const problems = constraintFolders.flatMap((folder): Problem[] => {
-    if (statSync(folder, { throwIfNoEntry: false })?.isDirectory() === true) return [];
-    const remedy = 'Name a folder that holds constraint sheets, one a file.';
-    return [{ code: 'file-unreadable', file: folder, message: 'there is no such folder', remedy }];
-  });
-  if (problems.length > 0) throw new ProblemError(problems);
-  const root = packageRoot();
-  return openShelf({
-    functionals: [join(root, 'functionals')],
-    constraints: [...constraintFolders, join(root, 'constraints')],
-  });
+  return openShelf(settle(catalogueFolders(constraintFolders)));
 }
 
 /** A functional by id or path. An unknown id that is a sheet in the current folder gets a hint. */
 export function findFunctional(shelf: Shelf, idOrPath: string): Outcome<Functional> {
   const found = shelf.functional(idOrPath);
-  if (found.ok) return found;
-  const file = `${idOrPath}.yaml`;
-  return failure(
-    found.problems.map((problem) =>
-      problem.code === 'unknown-functional' && problem.file === undefined && existsSync(file)
-        ? { ...problem, remedy: `For the sheet in this folder write ./${file}.` }
-        : problem,
-    ),
-  );
+  return found.ok ? found : failure(found.problems.map((problem) => hintAtOwnSheet(problem, idOrPath)));
 }
 
-/** Conditions with their requirements read; all of the catalogue when no ids are given. */
+/** The constraints that have a margin; rules of numerical quality have none. */
+export function conditionIds(shelf: Shelf): string[] {
+  return shelf.constraintIds().filter((id) => {
+    const definition = shelf.constraint(id);
+    return !definition.ok || definition.value.rule === undefined;
+  });
+}
+
+/** Conditions with their requirements read. */
 export function loadConditions(shelf: Shelf, ids: readonly string[]): Outcome<Condition[]> {
   return allOf(
     ids.map((id) => {
@@ -68,56 +55,13 @@ export function allOf<Value>(outcomes: readonly Outcome<Value>[]): Outcome<Value
 
 export const constantNames: readonly string[] = selectableConstants.map(({ name }) => name);
 
-export interface VetRequest {
-  readonly functionals: readonly Functional[];
-  readonly conditions: readonly Condition[];
-  readonly domain: Domain;
-  readonly constants: ReadonlyMap<string, GivenValue>;
-  readonly parameters: ReadonlyMap<string, GivenValue>;
-}
-
-export function vetAll(request: VetRequest, onProgress: (subject: string, points: number) => void): Findings {
-  const settings = {
-    domain: request.domain,
-    constants: constantValues(exactValues(request.constants)),
-    parameters: exactValues(request.parameters),
-  };
-  const trial = Object.fromEntries([...request.parameters].map(([name, { text }]) => [name, text]));
-  return {
-    format: 'rungcheck findings',
-    formatVersion: 1,
-    engineVersion: packageVersion(),
-    catalogueVersion: catalogueVersion(request.conditions),
-    functionals: request.functionals.map((functional) => ({
-      ...vetFunctional(functional, request.conditions, settings, onProgress),
-      parameters: trial,
-    })),
-  };
-}
-
 /** The parameters that no one of the functionals has, as problems of --set. */
 export function parameterProblems(functionals: readonly Functional[], names: Iterable<string>): Problem[] {
-  return functionals.flatMap(({ definition, parameters }) =>
-    [...names].flatMap((name): Problem[] => {
-      if (parameters.has(name)) return [];
-      const known = [...parameters.keys()];
-      const otherwise = known.length === 0 ? 'It has none.' : `It has ${known.join(', ')}.`;
-      const remedy = suggestion(name, known, otherwise);
-      return [{ code: 'wrong-option', message: `--set: ${definition.id} has no parameter ${name}`, remedy }];
-    }),
-  );
+  return functionals.flatMap((functional) => unknownParameters(functional, [...names]));
 }
 
 export function exactValues(given: ReadonlyMap<string, GivenValue>): Map<string, Rational> {
   return new Map([...given].map(([name, { value }]) => [name, value]));
-}
-
-/** Changes whenever a sheet of the conditions does. */
-function catalogueVersion(conditions: readonly Condition[]): string {
-  const hash = createHash('sha256');
-  const sheets = conditions.map(({ definition }) => `${definition.id}\n${definition.text}\n`);
-  for (const sheet of sheets.sort()) hash.update(sheet);
-  return hash.digest('hex').slice(0, 12);
 }
 
 export function listedFunctional({ definition, parameters }: Functional): ListedFunctional {
@@ -154,7 +98,8 @@ export function explanationOf(definition: ConstraintDefinition): Explanation {
     title: definition.title,
     statement: definition.statement,
     localForm: definition.localForm ?? null,
-    requirement: definition.requirement.text,
+    requirement:
+      definition.rule === undefined ? definition.requirement.text : 'by code of its own, not by a comparison',
     derivation: definition.derivation ?? null,
     force: definition.force,
     status: definition.status,
@@ -181,9 +126,11 @@ export function explanationOf(definition: ConstraintDefinition): Explanation {
   };
 }
 
-/** The standard domain, less the coordinates that the condition fixes. */
-function triedOn({ space, at }: ConstraintDefinition): string {
+/** The standard domain, less the coordinates that the condition fixes; or the points that it is asked at. */
+function triedOn(definition: ConstraintDefinition): string {
+  const { space, at } = definition;
   const fixed = at.map(({ name, value }) => `${coordinateSymbol(name)} = ${value.text}`);
+  if (isAskedAtPoints(definition)) return askedAt(definition, fixed);
   const axes = axesOf(standardDomain, space).filter(
     ({ name }) => name !== 'q' && !at.some((step) => step.name === name),
   );
@@ -191,4 +138,12 @@ function triedOn({ space, at }: ConstraintDefinition): string {
   const words = domainWords({ name: 'standard', space, coordinates, fixed: {} });
   const held = fixed.length === 0 ? '' : `${fixed.join(', ')}; `;
   return `${held}${words}; of these the coordinates that the functional has (standard domain)`;
+}
+
+function askedAt({ sweep, table }: ConstraintDefinition, fixed: readonly string[]): string {
+  const swept = sweep.map(
+    ({ name, values }) => `${coordinateSymbol(name)} = ${values.map(({ text }) => text.trim()).join(' | ')}`,
+  );
+  const rows = table === undefined ? [] : [`${table.rows.length} rows of a table`];
+  return `${[...fixed, ...swept, ...rows].join(', ')}; in high precision, limits by two sequences`;
 }

@@ -1,6 +1,6 @@
 import { readFileSync, statSync } from 'node:fs';
+import { fileFault } from '../errors/file-fault.ts';
 import { failure, type Outcome, success } from '../errors/problem.ts';
-import { fileFaults } from './output-file.ts';
 
 /** Larger input is refused unread. */
 const largestInput = 256 * 1024 * 1024;
@@ -30,8 +30,6 @@ export function readInputFile(path: string): Outcome<string> {
     }
     return success(readFileSync(path, 'utf8'));
   } catch (error) {
-    const code = (error as NodeJS.ErrnoException).code;
-    if (code === undefined) throw error;
-    return unreadable(fileFaults[code] ?? code);
+    return unreadable(fileFault(error));
   }
 }

@@ -1,13 +1,14 @@
 import { randomBytes } from 'node:crypto';
 import { realpathSync, renameSync, rmSync, statSync, writeFileSync } from 'node:fs';
 import { dirname } from 'node:path';
+import { fileFaults } from '../errors/file-fault.ts';
 import { type Problem, ProblemError } from '../errors/problem.ts';
 
 /**
  * Writes a file whole or not at all: under a temporary name beside it, then renamed. A target that is no regular file
  * (a device, a pipe) is written to directly. Throws a ProblemError when it cannot be written.
  */
-export function writeOutputFile(path: string, text: string): void {
+export function writeOutputFile(path: string, text: string | Uint8Array): void {
   try {
     const existing = statSync(path, { throwIfNoEntry: false });
     if (existing !== undefined && !existing.isFile()) {
@@ -57,16 +58,3 @@ function unwritableProblem(path: string, code: string): Problem {
   const message = `cannot write the file: ${fileFaults[code] ?? code}`;
   return { code: 'output-unwritable', file: path, message, remedy };
 }
-
-/** What the operating system's answers mean. */
-export const fileFaults: Readonly<Record<string, string>> = {
-  EEXIST: 'it exists already',
-  ENOENT: 'it does not exist, or its folder does not',
-  EACCES: 'permission denied',
-  EPERM: 'permission denied',
-  EROFS: 'the file system is read-only',
-  EISDIR: 'it is a folder',
-  ENOTDIR: 'a part of the path is not a folder',
-  ENOSPC: 'no space left',
-  ENAMETOOLONG: 'the name is too long',
-};

@@ -1,9 +1,16 @@
 import { Argument, Command, CommanderError, Option } from 'commander';
 import { ProblemError } from '../errors/problem.ts';
-import { packageVersion } from './package-root.ts';
 import { wrongOption } from './problems.ts';
+import { addCompletion } from './program-completion.ts';
+import { addFigures } from './program-figures.ts';
+import { constraintsOption, type End, examples, outOption, setOption } from './program-options.ts';
+import { addProofs } from './program-prove.ts';
+import { addRender } from './program-render.ts';
+import { addReport } from './program-report.ts';
+import { addVet } from './program-vet.ts';
 import { exitStatus, faultOf } from './status.ts';
 import type { Terminal } from './terminal.ts';
+import { versionText } from './version-text.ts';
 
 /** Runs one command line (without `node` and the program's name); answers the exit status and never throws. */
 export async function runProgram(args: readonly string[], terminal: Terminal, withTrace = false): Promise<number> {
@@ -18,9 +25,14 @@ export async function runProgram(args: readonly string[], terminal: Terminal, wi
 
 async function parseAndRun(args: readonly string[], terminal: Terminal): Promise<number> {
   let status: number = exitStatus.fine;
-  const program = makeProgram(terminal, (value) => {
-    status = value;
-  });
+  const asksVersion = args.some((arg) => arg === '--version' || arg === '-V');
+  const program = makeProgram(
+    terminal,
+    (value) => {
+      status = value;
+    },
+    asksVersion,
+  );
   if (args.length === 0) {
     terminal.writeErr(program.helpInformation());
     return exitStatus.faultyRequest;
@@ -45,20 +57,14 @@ function asProblem(error: unknown): unknown {
   return new ProblemError([wrongOption(message === '' || message === '(outputHelp)' ? 'no command' : message, remedy)]);
 }
 
-const collect = (value: string, previous: readonly string[] | undefined): readonly string[] => [
-  ...(previous ?? []),
-  value,
-];
-
-const examples = (...lines: readonly string[]): string => `\n${lines.join('\n')}`;
-
-function makeProgram(terminal: Terminal, end: (status: number) => void): Command {
+/** The program with all its commands; the version is only worked out when it is asked for. */
+function makeProgram(terminal: Terminal, end: (status: number) => void, asksVersion: boolean): Command {
   const program = new Command('rungcheck');
   program
     .description(
       'Vets exchange-correlation density functionals against the known exact conditions: which are broken, where in density space, and by how much.',
     )
-    .version(packageVersion(), '-V, --version', 'print the version')
+    .version(asksVersion ? versionText() : '', '-V, --version', 'print the version, and that of the catalogue')
     .helpOption('-h, --help', 'print help')
     .helpCommand('help [command]', 'print help for a command')
     .exitOverride()
@@ -76,93 +82,22 @@ function makeProgram(terminal: Terminal, end: (status: number) => void): Command
         '  rungcheck explain correlation-coordinate-scaling',
         '',
         'Exit status:',
-        '  0   nothing fails         1   a condition fails',
+        '  0   nothing fails         1   a condition fails, or something is worse than recorded',
         '  2   faulty request        70  fault of rungcheck itself (RUNGCHECK_TRACE=1 shows where)',
         '',
         'Quantities are in Hartree atomic units. Colour follows the terminal, NO_COLOR and FORCE_COLOR.',
       ),
     );
   addVet(program, terminal, end);
+  addProofs(program, terminal, end);
+  addRender(program, terminal, end);
   addAt(program, terminal, end);
+  addFigures(program, terminal, end);
+  addReport(program, terminal, end);
   addCatalogue(program, terminal, end);
   addSheets(program, terminal, end);
+  addCompletion(program, terminal, end);
   return program;
-}
-
-type End = (status: number) => void;
-
-const list = (flags: string, description: string) =>
-  new Option(flags, description).argParser<readonly string[]>(collect);
-
-const constraintsOption = () =>
-  list(
-    '--constraints <folder>',
-    'a folder with condition sheets of your own, beside those of the catalogue; repeatable',
-  );
-
-const setOption = () =>
-  list(
-    '--set <name=value,…>',
-    'other values of parameters for this run, marked as a trial in the output: kappa=0.9, mu=10/81',
-  );
-
-const outOption = () => new Option('--out <file>', 'write to a file, whole or not at all, instead of standard output');
-
-function addVet(program: Command, terminal: Terminal, end: End): void {
-  program
-    .command('vet')
-    .summary('decide which exact conditions functionals break, where and by how much')
-    .description(
-      'Scans the domain for violations of every condition that applies, moves the worst point to the true local extremum and confirms it in high precision before it says "violated". "holds" means that no violation was found: not a proof.',
-    )
-    .argument('<sheet or id...>', 'sheet files (…/name.yaml) or ids of the catalogue (pbe)')
-    .addOption(
-      new Option('--format <format>', 'table to read, json to keep').choices(['table', 'json']).default('table'),
-    )
-    .option(
-      '--domain <domain>',
-      'standard, wide, bounds such as rs=0.01:100,zeta=0:1,s=0:5,alpha=0:5, or a file with such bounds',
-      'standard',
-    )
-    .addOption(
-      new Option('--only <ids>', 'only these conditions, separated by commas; repeatable').argParser<readonly string[]>(
-        collect,
-      ),
-    )
-    .addOption(constraintsOption())
-    .addOption(
-      list(
-        '--constants <name=value,…>',
-        'other values of named constants, as in lieb-oxford=1.6358; explain shows the published ones',
-      ),
-    )
-    .addOption(setOption())
-    .option('--exit-zero', 'end with status 0 even when a condition fails')
-    .addOption(outOption())
-    .addHelpText(
-      'after',
-      examples(
-        'Examples:',
-        '  rungcheck vet pbe scan',
-        '  rungcheck vet ./mine.yaml --domain wide --format json --out findings.json',
-        '  rungcheck vet revpbe --only lieb-oxford --constants lieb-oxford=1.6358',
-        '  rungcheck vet pbe --set kappa=0.9 --only exchange-lieb-oxford',
-        '',
-        'What counts as a failure (exit status 1):',
-        '  A violated theorem fails when its local form is necessary, and is a warning when it is sufficient only.',
-        '  A conjecture or estimate is a note, a norm a score. A rule of numerical quality fails where real',
-        '  densities are (r_s 0.02–10, s ≤ 3, α ≤ 4). A conflict that the rung cannot avoid is a warning.',
-        '',
-        'Domains:',
-        '  standard  r_s 0.01–100, ζ 0–1, s 0–5, α 0–5',
-        '  wide      r_s 0.001–1000, ζ 0–1, s 0–100, α 0–10⁹',
-        '  Bounds that you do not give are those of standard.',
-      ),
-    )
-    .action(async (sheets, options) => {
-      const { vetCommand } = await import('./vet.ts');
-      end(vetCommand(sheets, options, terminal));
-    });
 }
 
 function addAt(program: Command, terminal: Terminal, end: End): void {
@@ -258,8 +193,19 @@ function addCatalogue(program: Command, terminal: Terminal, end: End): void {
       'Tells of one condition its statement, its local form and how that comes about, whether the form is necessary or only sufficient, where it is tried and to what tolerance, who holds it, who breaks it, and its sources.',
     )
     .argument('<condition>', 'id of the condition; see rungcheck list constraints')
+    .option(
+      '--for <sheet or id>',
+      'ask it of a functional too: verdict, witness, the margin around it, limiting sequences',
+    )
     .addOption(constraintsOption())
-    .addHelpText('after', examples('Example:', '  rungcheck explain lieb-oxford'))
+    .addHelpText(
+      'after',
+      examples(
+        'Examples:',
+        '  rungcheck explain lieb-oxford',
+        '  rungcheck explain exchange-gradient-second-order --for pbe',
+      ),
+    )
     .action(async (id, options) => {
       const { explainCommand } = await import('./explain.ts');
       end(explainCommand(id, options, terminal));
@@ -284,11 +230,13 @@ function addSheets(program: Command, terminal: Terminal, end: End): void {
     });
   program
     .command('schema')
-    .summary('the JSON Schema of a sheet, a condition sheet or the findings')
+    .summary('the JSON Schema of a sheet, a condition sheet, a project file, findings or a state')
     .description(
-      'Prints a JSON Schema (draft 2020-12): of sheets and condition sheets for editors, of findings for programs.',
+      'Prints a JSON Schema (draft 2020-12): of sheets, condition sheets and project files for editors, of findings and states for programs.',
     )
-    .addArgument(new Argument('<what>', 'sheet, constraint or findings').choices(['sheet', 'constraint', 'findings']))
+    .addArgument(
+      new Argument('<what>', 'of which file').choices(['sheet', 'constraint', 'project', 'findings', 'state']),
+    )
     .addHelpText('after', examples('Example:', '  rungcheck schema sheet > sheet.schema.json'))
     .action(async (what, _options) => {
       const { schemaCommand } = await import('./schema.ts');

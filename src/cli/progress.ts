@@ -11,7 +11,11 @@ const patience = 1000;
 const interval = 100;
 
 /** One line on the error stream that tells how far a long run is; silent when nobody watches. */
-export function progressLine(terminal: Pick<Terminal, 'writeErr' | 'watched'>, clock: () => number): ProgressLine {
+export function progressLine(
+  terminal: Pick<Terminal, 'writeErr' | 'watched'>,
+  clock: () => number,
+  things = 'points',
+): ProgressLine {
   const start = clock();
   let written = start + patience - interval;
   let points = 0;
@@ -23,7 +27,7 @@ export function progressLine(terminal: Pick<Terminal, 'writeErr' | 'watched'>, c
       written = clock();
       shown = true;
       const seconds = Math.floor((written - start) / 1000);
-      terminal.writeErr(`\r\u001b[K${subject}: ${(points / 1e6).toFixed(1)} million points looked at, ${seconds} s`);
+      terminal.writeErr(`\r\u001b[K${subject}: ${(points / 1e6).toFixed(1)} million ${things} looked at, ${seconds} s`);
     },
     end() {
       if (shown) terminal.writeErr('\r\u001b[K');

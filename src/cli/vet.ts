@@ -1,58 +1,46 @@
-import { type Problem, ProblemError } from '../errors/problem.ts';
-import { exitStatusOf } from '../finding/gate-counts.ts';
-import { findingsJson } from '../report/json.ts';
-import { vetTable } from '../report/vet-table.ts';
-import { parseDomain } from './domain-option.ts';
-import { constantNames, findFunctional, loadConditions, openCatalogue, parameterProblems, vetAll } from './engine.ts';
-import { readInputFile } from './input-file.ts';
-import { parseAssignments, parseIds } from './options.ts';
-import { outputProblems, writeOutputFile } from './output-file.ts';
-import { valueOr } from './problems.ts';
+import { ProblemError } from '../errors/problem.ts';
+import { faultProblems } from './faults.ts';
 import { progressLine } from './progress.ts';
-import { exitStatus } from './status.ts';
-import { plainWidth, type Terminal } from './terminal.ts';
+import { openWorkshop, runVet } from './run-vet.ts';
+import { endOnSignals } from './signals.ts';
+import { checkTelling, tellFindings } from './tell.ts';
+import type { Terminal } from './terminal.ts';
+import type { VetOptions } from './vet-options.ts';
+import { readVetRequest } from './vet-request.ts';
 
-export interface VetOptions {
-  readonly format: 'table' | 'json';
-  readonly domain: string;
-  readonly only?: readonly string[];
-  readonly constraints?: readonly string[];
-  readonly constants?: readonly string[];
-  readonly set?: readonly string[];
-  readonly exitZero?: boolean;
-  readonly out?: string;
+/** The day of the clock here, year-month-day. */
+export function clockDay(now = new Date()): string {
+  const two = (value: number) => String(value).padStart(2, '0');
+  return `${now.getFullYear()}-${two(now.getMonth() + 1)}-${two(now.getDate())}`;
 }
 
-/** `rungcheck vet`: the findings as a table or JSON; answers the exit status. All faults of the request at once. */
-export function vetCommand(sheets: readonly string[], options: VetOptions, terminal: Terminal): number {
-  const problems: Problem[] = [];
-  const shelf = openCatalogue(options.constraints ?? []);
-  const { exitZero = false, format, out } = options;
-  if (out !== undefined) problems.push(...outputProblems(out));
-  const domain = valueOr(parseDomain(options.domain, readInputFile), undefined, problems);
-  const constants = valueOr(
-    parseAssignments('--constants', options.constants ?? [], constantNames),
-    new Map(),
-    problems,
-  );
-  const parameters = valueOr(parseAssignments('--set', options.set ?? []), new Map(), problems);
-  const known = shelf.constraintIds();
-  const ids = options.only === undefined ? known : valueOr(parseIds('--only', options.only, known), [], problems);
-  const functionals = sheets.flatMap((sheet) => {
-    const functional = valueOr(findFunctional(shelf, sheet), undefined, problems);
-    return functional === undefined ? [] : [functional];
-  });
-  problems.push(...parameterProblems(functionals, parameters.keys()));
-  const conditions = valueOr(loadConditions(shelf, ids), [], problems);
-  if (domain === undefined || problems.length > 0) throw new ProblemError(problems);
-
+/** `rungcheck vet`: answers the exit status. All faults of the request at once; a faulty sheet ends with status 2. */
+export async function vetCommand(
+  sheets: readonly string[],
+  options: VetOptions,
+  terminal: Terminal,
+  today = clockDay(),
+): Promise<number> {
+  if (options.watch === true) {
+    const { watchCommand } = await import('./watch.ts');
+    return watchCommand(sheets, options, terminal, today);
+  }
+  const request = await readVetRequest(sheets, options, checkTelling(options));
+  const workshop = await openWorkshop(request.jobs, options.cache);
   const progress = progressLine(terminal, Date.now);
-  const findings = vetAll({ functionals, conditions, domain, constants, parameters }, progress.report);
-  progress.end();
-  const toFile = out !== undefined;
-  const look = { width: toFile ? plainWidth : terminal.width, colour: !toFile && terminal.colour, exitZero };
-  const text = format === 'json' ? findingsJson(findings) : vetTable(findings, look);
-  if (toFile) writeOutputFile(out, text);
-  else terminal.writeOut(text);
-  return exitZero ? exitStatus.fine : exitStatusOf(findings);
+  const release = endOnSignals(() => progress.end());
+  try {
+    const { findings } = await runVet(request, workshop, progress, today);
+    const faults = findings.faults ?? [];
+    if (findings.functionals.length === 0 && faults.length > 0 && faults.every(({ internal }) => !internal)) {
+      throw new ProblemError(faultProblems(faults));
+    }
+    const fault = workshop.cache.fault();
+    if (fault !== undefined) terminal.writeErr(`warning: the cache cannot be written: ${fault}\n`);
+    return await tellFindings(findings, options, request.tolerances, request.folders, terminal);
+  } finally {
+    release();
+    progress.end();
+    await workshop.close();
+  }
 }

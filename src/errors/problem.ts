@@ -26,7 +26,11 @@ export const problemCodes = [
   'unknown-constraint',
   'wrong-option',
   'wrong-points',
+  'wrong-findings',
   'output-unwritable',
+  'wrong-state',
+  'newer-format',
+  'changed-meanwhile',
 ] as const;
 
 export type ProblemCode = (typeof problemCodes)[number];

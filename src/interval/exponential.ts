@@ -9,7 +9,8 @@ import { enclose, oneStep, type Pair } from './widen.ts';
 /** log 2 in two parts: the first has 32 significant bits, so that k times it is exact for |k| < 2²¹. */
 export const logTwoHigh = 0.6931471803691238;
 export const logTwoLow = 1.9082149292705877e-10;
-const inverseLogTwo = 1.4426950408889634;
+/** Only chooses k; how exact it is does not matter. */
+const inverseLogTwo = Math.LOG2E;
 
 /** Beyond these the result is not a normal double. */
 const largest = 709.7;

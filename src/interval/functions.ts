@@ -15,8 +15,14 @@ const bendsTowardZero = (lower: number, upper: number): 1 | -1 | 0 => (lower >= 
 /** Convex for x ≥ 0 and concave for x ≤ 0. */
 const bendsAway = (lower: number, upper: number): 1 | -1 | 0 => (lower >= 0 ? 1 : upper <= 0 ? -1 : 0);
 
+/** The slope of exp is its value. */
+function itself(_x: number, value: Pair, out: Pair): void {
+  out[0] = value[0] as number;
+  out[1] = value[1] as number;
+}
+
 /** 1/f(x) for an enclosed f > 0. */
-const inverse = (f: (x: number, out: Pair) => void) => (x: number, out: Pair) => {
+const inverse = (f: (x: number, out: Pair) => void) => (x: number, _value: Pair, out: Pair) => {
   f(x, out);
   reciprocal(out);
 };
@@ -37,20 +43,27 @@ function onePlusSquare(x: number, out: Pair): void {
 
 /** Every unary operator but neg and abs. */
 export const smoothFunctions = {
-  exp: { at: exp, least: every, open: false, over: 1, slope: exp, curvature: convex },
-  expm1: { at: expm1, least: every, open: false, over: 1, slope: exp, curvature: convex },
+  exp: { at: exp, least: every, open: false, over: 1, slope: itself, curvature: convex },
+  expm1: { at: expm1, least: every, open: false, over: 1, slope: (x, _value, out) => exp(x, out), curvature: convex },
   log: { at: log, least: 0, open: true, over: 1, slope: inverse(exact((x) => x)), curvature: concave },
   log1p: { at: log1p, least: -1, open: true, over: 1, slope: inverse(exact((x) => 1 + x)), curvature: concave },
-  sin: { at: sin, least: every, open: false, over: wave(sin, Math.PI / 2), slope: cos, curvature: () => 0 },
+  sin: { at: sin, least: every, open: false, over: wave(sin, Math.PI / 2), curvature: () => 0 },
   cos: { at: cos, least: every, open: false, over: wave(cos, 0), curvature: () => 0 },
-  sinh: { at: sinh, least: every, open: false, over: 1, slope: cosh, curvature: bendsAway },
-  cosh: { at: cosh, least: every, open: false, over: overEven(cosh, 1), slope: sinh, curvature: convex },
+  sinh: { at: sinh, least: every, open: false, over: 1, slope: (x, _value, out) => cosh(x, out), curvature: bendsAway },
+  cosh: {
+    at: cosh,
+    least: every,
+    open: false,
+    over: overEven(cosh, 1),
+    slope: (x, _value, out) => sinh(x, out),
+    curvature: convex,
+  },
   tanh: {
     at: tanh,
     least: every,
     open: false,
     over: 1,
-    slope: (x, out) => {
+    slope: (x, _value, out) => {
       cosh(x, out);
       out[0] = productDown(out[0] as number, out[0] as number);
       out[1] = productUp(out[1] as number, out[1] as number);
@@ -63,7 +76,7 @@ export const smoothFunctions = {
     least: every,
     open: false,
     over: 1,
-    slope: (x, out) => {
+    slope: (x, _value, out) => {
       onePlusSquare(x, out);
       const upper = out[1] as number;
       sqrt(out[0] as number, out);
@@ -81,7 +94,7 @@ export const smoothFunctions = {
     open: false,
     over: 1,
     // 2/√π·exp(−x²)
-    slope: (x, out) => {
+    slope: (x, _value, out) => {
       const [square, above] = [productDown(x, x), productUp(x, x)];
       exp(-above, out);
       const lower = out[0] as number;
@@ -97,9 +110,8 @@ export const smoothFunctions = {
     open: false,
     over: 1,
     // 1/(eʷ(1 + w))
-    slope: (x, out) => {
-      lambertW(x, out);
-      const [low, high] = [out[0] as number, out[1] as number];
+    slope: (_x, value, out) => {
+      const [low, high] = [value[0] as number, value[1] as number];
       exp(low, out);
       const lower = productDown(out[0] as number, Math.max(0, down(1 + low)));
       exp(high, out);
@@ -126,31 +138,34 @@ export type SmoothName =
   | 'erf'
   | 'lambertW';
 
-const twoOverRootPi = [1.1283791670955125, 1.1283791670955128] as const;
+/** 2/√π lies within u of this. */
+const twoOverRootPi = [down(1.1283791670955126), up(1.1283791670955126)] as const;
 
 /** An even function that increases with |x|, over an interval; its value at 0. */
 function overEven(at: (x: number, out: Pair) => void, atZero: number) {
-  return (lower: number, upper: number, out: Pair): void => {
-    at(lower > 0 ? lower : upper < 0 ? upper : 0, out);
+  return (lower: number, upper: number, out: Pair): 0 => {
+    at(Math.max(lower, Math.min(upper, 0)), out);
     const least = lower > 0 || upper < 0 ? (out[0] as number) : atZero;
     at(Math.max(-lower, upper), out);
     out[0] = least;
+    return 0;
   };
 }
 
 /** A wave whose maxima lie at peak + 2πn, minima half a turn further: the ends and what lies between. */
 function wave(at: (x: number, out: Pair) => void, peak: number) {
-  return (lower: number, upper: number, out: Pair): void => {
+  return (lower: number, upper: number, out: Pair): 0 => {
     if (!(upper - lower < 6.28) || !(Math.abs(lower) <= largestAngle) || !(Math.abs(upper) <= largestAngle)) {
       out[0] = -1;
       out[1] = 1;
-      return;
+      return 0;
     }
     at(lower, out);
     const [a, b] = [out[0] as number, out[1] as number];
     at(upper, out);
     out[0] = reaches(peak + Math.PI) ? -1 : Math.min(a, out[0] as number);
     out[1] = reaches(peak) ? 1 : Math.max(b, out[1] as number);
+    return 0;
     // With room for rounding: 10⁶ turns err by less than 10⁻⁹.
     function reaches(place: number): boolean {
       const slack = 1e-9;

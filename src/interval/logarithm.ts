@@ -21,7 +21,12 @@ function twiceArtanh(s: number): number {
 function logarithm(x: number): number {
   let e = exponentOf(x);
   // The division is exact: x = m·2^e with 0.70 < m < 1.42.
-  let m = e > 1000 ? (x / powerOfTwo(1000)) * powerOfTwo(1000 - e) : e < -1000 ? x * powerOfTwo(1000) * powerOfTwo(-e - 1000) : x * powerOfTwo(-e);
+  let m =
+    e > 1000
+      ? (x / powerOfTwo(1000)) * powerOfTwo(1000 - e)
+      : e < -1000
+        ? x * powerOfTwo(1000) * powerOfTwo(-e - 1000)
+        : x * powerOfTwo(-e);
   if (m > Math.SQRT2) {
     m /= 2;
     e++;

@@ -1,7 +1,7 @@
 import { type Rational, toNumber } from '../number/rational.ts';
 import { exp } from './exponential.ts';
 import { log } from './logarithm.ts';
-import { exponentByRoots, positivePower } from './root.ts';
+import { powerByRoots } from './root.ts';
 import type { Smooth } from './smooth.ts';
 import { down, type Pair, productDown, productUp, quotientDown, quotientUp, up } from './widen.ts';
 
@@ -9,8 +9,8 @@ type At = (x: number, out: Pair) => void;
 
 /** x^(p/q) for x ≥ 0, by verified roots and products, or as exp((p/q)·log x). */
 function positive(exponent: Rational): At {
-  const byRoots = exponentByRoots(exponent);
-  if (byRoots !== undefined) return (x, out) => positivePower(x, byRoots, out);
+  const byRoots = powerByRoots(exponent);
+  if (byRoots !== undefined) return byRoots;
   const rounded = toNumber(exponent);
   const [low, high] = [down(rounded), up(rounded)];
   return (x, out) => {
@@ -35,54 +35,40 @@ export function powerFunction(exponent: Rational): Smooth {
   const isNegative = exponent.s < 0n;
   const isReal = exponent.d % 2n === 1n;
   const isEven = exponent.n % 2n === 0n;
-  const below = exponent.sub(1);
-  const slopeMagnitude = below.equals(0) ? undefined : positive(below);
   const value = toNumber(exponent);
-  const [low, high] = exponent.d === 1n ? [value, value] : [down(value), up(value)];
   const at: At = (x, out) => {
     magnitude(Math.abs(x), out);
     if (x < 0 && !isEven) mirror(out);
   };
-  const slope: At = (x, out) => {
-    // p/q·|x|^(p/q − 1), odd in x where x^(p/q) is even
-    if (slopeMagnitude === undefined) out.fill(1);
-    else slopeMagnitude(Math.abs(x), out);
-    const [a, b] = [out[0] as number, out[1] as number];
-    out[0] = Math.min(productDown(low, a), productDown(low, b), productDown(high, a), productDown(high, b));
-    out[1] = Math.max(productUp(low, a), productUp(low, b), productUp(high, a), productUp(high, b));
-    if (x < 0 && isEven) mirror(out);
+  /** p/q·x^(p/q)/x: the middle of the enclosure with four roundings, and what its width adds. */
+  const slope = (x: number, result: Pair, out: Pair): void => {
+    const [lower, upper] = [result[0] as number, result[1] as number];
+    const middle = (value * (lower + (upper - lower) * 0.5)) / x;
+    const margin = Math.abs(middle) * 2 ** -49 + Math.abs(value * (upper - lower)) / Math.abs(x);
+    out[0] = middle - margin;
+    out[1] = middle + margin;
   };
   // On x > 0 the second derivative has the sign of (p/q)(p/q − 1).
   const bend = isNegative || value > 1 ? 1 : -1;
-  const pair = new Float64Array(2);
-  const over = (lower: number, upper: number, out: Pair): void => {
-    if (lower >= 0) monotone(lower, upper, isNegative);
-    else if (upper <= 0) monotone(lower, upper, isNegative !== isEven);
-    else if (!isNegative) {
-      if (!isEven) monotone(lower, upper, false);
-      else {
-        at(Math.max(-lower, upper), out);
-        out[0] = 0;
-      }
-    } else {
+  const over = (lower: number, upper: number, out: Pair): 1 | -1 | 0 => {
+    if (lower >= 0) return isNegative ? -1 : 1;
+    // 0 is approached from below there.
+    if (upper < 0 || (upper === 0 && (isEven || !isNegative))) return isNegative === isEven ? 1 : -1;
+    if (!isNegative) {
+      if (!isEven) return 1;
+      at(Math.max(-lower, upper), out);
+      out[0] = 0;
+      return 0;
+    }
+    at(Math.max(-lower, upper), out);
+    const least = out[0] as number;
+    out[0] = isEven ? least : Number.NEGATIVE_INFINITY;
+    out[1] = Number.POSITIVE_INFINITY;
+    if (!isEven && upper === 0) {
+      at(lower, out);
       out[0] = Number.NEGATIVE_INFINITY;
-      out[1] = Number.POSITIVE_INFINITY;
-      if (isEven) at(Math.max(-lower, upper), pair);
-      if (isEven) out[0] = pair[0] as number;
     }
-    function monotone(from: number, to: number, decreases: boolean): void {
-      at(decreases ? to : from, out);
-      const least = out[0] as number;
-      // The end 0 of an interval of negative numbers is approached from below.
-      at(decreases ? from : to, out);
-      if (isNegative && to === 0 && !isEven) {
-        out[0] = Number.NEGATIVE_INFINITY;
-        at(from, pair);
-        out[1] = pair[1] as number;
-        return;
-      }
-      out[0] = least;
-    }
+    return 0;
   };
   return {
     at,

@@ -11,45 +11,54 @@ export interface Smooth {
   readonly open: boolean;
   /** Whether f has no finite value at 0, a point inside the domain or at its end. */
   readonly pole?: boolean;
-  /** Whether f increases (1) or decreases (−1) on its whole domain, or a function that encloses it over an interval. */
-  readonly over: 1 | -1 | ((lower: number, upper: number, out: Pair) => void);
-  /** Encloses f′(x). */
-  readonly slope?: (x: number, out: Pair) => void;
+  /**
+   * Whether f increases (1) or decreases (−1); or a function that tells this of an interval, or encloses f over it and
+   * answers 0.
+   */
+  readonly over: 1 | -1 | ((lower: number, upper: number, out: Pair) => 1 | -1 | 0);
+  /** Encloses f′(x), given the enclosure of f(x). */
+  readonly slope?: (x: number, value: Pair, out: Pair) => void;
   /** 1 where f is convex on the whole interval, −1 where it is concave, 0 where neither is known. */
   readonly curvature: (lower: number, upper: number) => 1 | -1 | 0;
 }
 
 const first = new Float64Array(2);
 const second = new Float64Array(2);
+const third = new Float64Array(2);
+const slopes = new Float64Array(2);
 
-/** Replaces the interval in the scratch by an enclosure of its image; sets `outside`. */
-export function imageOf(f: Smooth, scratch: Scratch): void {
+/**
+ * Replaces the interval in the scratch by an enclosure of its image; sets `outside`. Answers whether the values at the
+ * two ends were left in `first` and `second`.
+ */
+export function imageOf(f: Smooth, scratch: Scratch): boolean {
   let lower = scratch[register.lower] as number;
   const upper = scratch[register.upper] as number;
-  scratch[register.outside] = 0;
+  let outside = 0;
   if (!(lower >= f.least)) {
-    scratch[register.outside] = leaves;
+    outside = leaves;
     lower = f.least;
-  } else if (lower === f.least && f.open) scratch[register.outside] = touches;
-  if (f.pole === true && lower <= 0 && upper >= 0) {
-    scratch[register.outside] = (scratch[register.outside] as number) | (lower === 0 || upper === 0 ? touches : leaves);
-  }
+  } else if (lower === f.least && f.open) outside = touches;
+  if (f.pole === true && lower <= 0 && upper >= 0) outside |= lower === 0 || upper === 0 ? touches : leaves;
+  scratch[register.outside] = outside;
   if (!(upper >= lower)) {
     scratch[register.outside] = leaves;
     scratch[register.lower] = Number.NEGATIVE_INFINITY;
     scratch[register.upper] = Number.POSITIVE_INFINITY;
-    return;
+    return false;
   }
-  if (typeof f.over === 'function') {
-    f.over(lower, upper, first);
+  const { over } = f;
+  const direction = typeof over === 'function' ? over(lower, upper, first) : over;
+  if (direction === 0) {
     scratch[register.lower] = first[0] as number;
     scratch[register.upper] = first[1] as number;
-    return;
+    return false;
   }
   f.at(lower, first);
   f.at(upper, second);
-  scratch[register.lower] = (f.over === 1 ? first[0] : second[0]) as number;
-  scratch[register.upper] = (f.over === 1 ? second[1] : first[1]) as number;
+  scratch[register.lower] = (direction === 1 ? first[0] : second[0]) as number;
+  scratch[register.upper] = (direction === 1 ? second[1] : first[1]) as number;
+  return true;
 }
 
 /**
@@ -61,7 +70,7 @@ export function imageOf(f: Smooth, scratch: Scratch): void {
 export function lineThrough(f: Smooth, scratch: Scratch): void {
   const lower = scratch[register.lower] as number;
   const upper = scratch[register.upper] as number;
-  imageOf(f, scratch);
+  const hasEnds = imageOf(f, scratch);
   const bottom = scratch[register.lower] as number;
   const top = scratch[register.upper] as number;
   const curvature = lower >= f.least && upper > lower ? f.curvature(lower, upper) : 0;
@@ -69,28 +78,31 @@ export function lineThrough(f: Smooth, scratch: Scratch): void {
     level(bottom, top, scratch);
     return;
   }
-  f.at(lower, first);
-  f.at(upper, second);
-  const slope = (((second[0] as number) + (second[1] as number)) / 2 - ((first[0] as number) + (first[1] as number)) / 2) / (upper - lower);
+  if (!hasEnds) {
+    f.at(lower, first);
+    f.at(upper, second);
+  }
+  const slope =
+    (((second[0] as number) + (second[1] as number)) * 0.5 - ((first[0] as number) + (first[1] as number)) * 0.5) /
+    (upper - lower);
   const side = curvature === 1 ? 1 : 0;
   const atLower = residual(first[side] as number, slope, lower, curvature);
   const atUpper = residual(second[side] as number, slope, upper, curvature);
   const far = curvature === 1 ? Math.max(atLower, atUpper) : Math.min(atLower, atUpper);
-  const middle = lower + (upper - lower) / 2;
-  f.at(middle, first);
-  f.slope(middle, second);
+  const middle = lower + (upper - lower) * 0.5;
+  f.at(middle, third);
+  f.slope(middle, third, slopes);
   const reach = Math.max(middle - lower, upper - middle);
-  const tilt = Math.max(Math.abs((second[0] as number) - slope), Math.abs((second[1] as number) - slope));
+  const tilt = Math.max(Math.abs((slopes[0] as number) - slope), Math.abs((slopes[1] as number) - slope));
   const slack = tilt * reach * (1 + 8 * oneStep);
-  const near = residual(first[1 - side] as number, slope, middle, curvature === 1 ? -1 : 1) - curvature * slack;
-  const offset = (far + near) / 2;
-  const error = (Math.abs(far - near) / 2) * (1 + 8 * oneStep) + (Math.abs(far) + Math.abs(near)) * 4 * oneStep;
-  if (!(error < 1e300) || !(error <= (top - bottom) / 2)) {
+  const near = residual(third[1 - side] as number, slope, middle, curvature === 1 ? -1 : 1) - curvature * slack;
+  const error = Math.abs(far - near) * 0.5 * (1 + 8 * oneStep) + (Math.abs(far) + Math.abs(near)) * 4 * oneStep;
+  if (!(error < 1e300) || !(error <= (top - bottom) * 0.5)) {
     level(bottom, top, scratch);
     return;
   }
   scratch[register.slope] = slope;
-  scratch[register.offset] = offset;
+  scratch[register.offset] = (far + near) * 0.5;
   scratch[register.error] = error;
 }
 

@@ -54,8 +54,10 @@ function guess(x: number): number {
     if (!Number.isFinite(step) || step === 0) break;
     w -= step;
   }
-  return w >= -1 ? w : -1;
+  return Number.isNaN(w) ? -1 : Math.max(w, -1);
 }
+
+const smallArgument = 2 ** -60;
 
 /**
  * The principal branch of Lambert's W for x ≥ −1/e, verified: w·eʷ increases for w ≥ −1, so a w with w·eʷ ≤ x in
@@ -65,6 +67,11 @@ export function lambertW(x: number, out: Pair): void {
   if (x === 0 || x === Number.POSITIVE_INFINITY) {
     out[0] = x === 0 ? 0 : 700;
     out[1] = x;
+    return;
+  }
+  if (Math.abs(x) < smallArgument) {
+    // x − x² < W(x) < x
+    enclose(x, 2 ** -50, out);
     return;
   }
   const w = guess(x);

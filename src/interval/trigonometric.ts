@@ -70,7 +70,12 @@ function arctangentSeries(t: number): number {
 }
 
 /** arctan of 1/2 and 3/2, π/4 and π/2, each within u. */
-const arctangents = { half: 0.4636476090008061, one: 0.7853981633974483, threeHalves: 0.982793723247329, infinity: 1.5707963267948966 };
+const arctangents = {
+  half: 0.4636476090008061,
+  one: 0.7853981633974483,
+  threeHalves: 0.982793723247329,
+  infinity: 1.5707963267948966,
+};
 
 /**
  * arctan x = arctan c + arctan((x − c)/(1 + cx)) with the c that makes the last argument smallest (within 4u): the

@@ -9,7 +9,6 @@ export const oneStep = 2 ** -52;
 
 /** Below this a product or quotient may have lost bits to underflow; sums never do. */
 export const tiny = 2 ** -960;
-export const huge = 2 ** 1000;
 
 /** At most the true value of something whose double is x within one rounding. */
 export function down(x: number): number {

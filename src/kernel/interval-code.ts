@@ -1,10 +1,23 @@
 import { argumentsOf, type Graph, type Node, type NodeId } from '../graph/graph.ts';
 import { reachable } from '../graph/traverse.ts';
-import type { SmoothName } from '../interval/functions.ts';
 import { leaves, touches } from '../interval/scratch.ts';
+import { rational } from '../number/rational.ts';
 import { type Guard, guardOf, guardsOf, isNonZero } from './guards.ts';
-import { evaluateIntervals } from './interval-point.ts';
-import { numberText } from './operators.ts';
+import {
+  above,
+  axesIn,
+  axesOfNodes,
+  constantOperand,
+  enclosedConstants,
+  type FunctionName,
+  mayLeave,
+  type Operand,
+  productText,
+  radius,
+  step,
+  underflow,
+} from './interval-operand.ts';
+import { type EnclosedValue, evaluateIntervals } from './interval-point.ts';
 
 export interface IntervalOptions {
   /** Whether first-order forms are carried beside the natural intervals. */
@@ -13,40 +26,22 @@ export interface IntervalOptions {
   readonly nonZero?: ReadonlySet<string>;
 }
 
-/** A unary operator, or numerator and denominator of a power. */
-export type FunctionName = SmoothName | readonly [bigint, bigint];
-
 export interface IntervalCode {
-  readonly source: string;
+  /** Bodies of functions, to be called in turn. */
+  readonly parts: readonly string[];
+  /** Numbers that are kept between the parts, in V. */
+  readonly slots: number;
   /** What `images` and `lines` must hold, in order. */
   readonly functions: readonly FunctionName[];
 }
 
-/** 2⁻⁵²: one step outward; and what a sum of at most eight positive numbers must be multiplied by to be a bound. */
-const step = '2.220446049250313e-16';
-const above = '1.0000000000000036';
-/** More than what underflow can lose in the few products of one node. */
-const underflow = '1e-300';
-
-/** An operand as texts: its interval, and its first-order form over the axes it depends on. */
-interface Operand {
-  readonly lower: string;
-  readonly upper: string;
-  readonly centre: string;
-  readonly error: string;
-  readonly axes: readonly number[];
-  readonly coefficient: (axis: number) => string;
-  /** A value that is not 0 where the operand may lack a value. */
-  readonly outside: string | undefined;
-  readonly constant?: readonly [number, number];
-}
-
 /**
  * JavaScript for the outputs. Local names: l, u the interval of a node, c its centre, a its coefficients by axis, e the
- * error of its first-order form, w whether it may lack a value; m whether a comparison may come out so.
+ * error of its first-order form, w whether it may lack a value. What a node leaves is kept in V; what an earlier box left
+ * there is read only where a guard says that it does not count.
  *
  * Soundness of the forms: every coefficient and centre is the result of a few operations that err by u relatively; the
- * sum of their magnitudes times 2u (`step`), and 1e-300 for underflow, is added to the error, and the error, a sum of
+ * sum of their magnitudes times 2u (`step`), and 1e-150 for underflow, is added to the error, and the error, a sum of
  * positive numbers, is rounded up by a factor. The interval is intersected with the range of the form; where the form
  * is the wider by its error alone, it is replaced by the middle of the interval. NaN fails each comparison that would
  * let a form tighten an interval.
@@ -62,10 +57,14 @@ export function generateIntervals(
   const masks = axesOfNodes(graph, ids, variables);
   const constants = enclosedConstants(graph, ids, masks);
   const functions: FunctionName[] = [];
-  const declared: string[] = [];
+  const parts: string[][] = [];
   const lines: string[] = [];
+  const slots = new Map<string, number>();
+  let locals: string[] = [];
+  let nodesInPart = 0;
   const flagged = new Set<NodeId>();
   const done = new Set<NodeId>();
+  const computed = new Set<NodeId>();
   const comparisons = new Map<string, string>();
   const reciprocals = new Map<string, Operand>();
   let open: string | undefined;
@@ -77,8 +76,12 @@ export function generateIntervals(
   outputs.forEach((id, index) => {
     emitOutput(id, index);
   });
-  const source = [`"use strict";`, declared.length === 0 ? '' : `let ${declared.join(', ')};`, ...lines].join('\n');
-  return { source, functions };
+  endPart();
+  return {
+    parts: parts.map((part) => ['"use strict"; let h = 0.5, t = 0.5, r = 0.5, q = 0.5, k = 0.5;', ...part].join('\n')),
+    functions,
+    slots: slots.size,
+  };
 
   /** Arguments first, and before a guarded node what its guards compare. */
   function visit(id: NodeId, path: Set<NodeId>): void {
@@ -102,8 +105,16 @@ export function generateIntervals(
   function emitNode(id: NodeId): void {
     const node = graph.node(id);
     const guarding = [...(guards.get(id) as ReadonlyMap<string, Guard>).values()].map(comparisonName);
+    if (nodesInPart >= nodesPerPart) endPart();
     openBlock(guarding.filter((name) => name !== undefined).join(' && '));
     emitComputation(id, node);
+    end();
+  }
+
+  function endPart(): void {
+    closeBlock();
+    parts.push(lines.splice(0));
+    nodesInPart = 0;
   }
 
   function openBlock(condition: string): void {
@@ -126,15 +137,14 @@ export function generateIntervals(
     if (!ready) return undefined;
     // Computed outside every block, so that it is there for all.
     closeBlock();
-    const name = `m${comparisons.size}`;
+    const name = `${slot(`m${comparisons.size}`)} !== 0`;
     comparisons.set(guard.key, name);
     const [a, b] = [operand(guard.left), operand(guard.right)];
     const strict = guard.op === 'ifLess';
     const text = guard.outcome
       ? `${a.lower} ${strict ? '<' : '<='} ${b.upper}`
       : `${a.upper} ${strict ? '>=' : '>'} ${b.lower}`;
-    declared.push(`${name} = true`);
-    lines.push(`${name} = ${text};`);
+    lines.push(`${name.replace(' !== 0', '')} = ${text} ? 1 : 0;`);
     return name;
   }
 
@@ -142,21 +152,39 @@ export function generateIntervals(
     const constant = constants.get(id);
     if (constant !== undefined) return constantOperand(constant);
     const axes = axesIn(masks.get(id) as number);
+    return stored(id, axes, flagged.has(id));
+  }
+
+  /** The texts that read what a node has stored. */
+  function stored(id: NodeId | string, axes: readonly number[], isFlagged: boolean): Operand {
     return {
-      lower: `l${id}`,
-      upper: `u${id}`,
-      centre: `c${id}`,
-      error: `e${id}`,
+      lower: slot(`l${id}`),
+      upper: slot(`u${id}`),
+      centre: slot(`c${id}`),
+      error: slot(`e${id}`),
       axes,
-      coefficient: (axis) => `a${id}_${axis}`,
-      outside: flagged.has(id) ? `w${id}` : undefined,
+      coefficient: (axis) => slot(`a${id}_${axis}`),
+      outside: isFlagged ? slot(`w${id}`) : undefined,
     };
   }
 
+  function slot(name: string): string {
+    const index = slots.get(name) ?? slots.size;
+    slots.set(name, index);
+    return `V[${index}]`;
+  }
+
+  /** Opens the block of one node, with its values as locals until they are stored. */
   function declare(id: NodeId | string, axes: readonly number[], isFlagged: boolean): void {
-    declared.push(`l${id} = 0`, `u${id} = 0`);
-    if (affine) declared.push(`c${id} = 0`, `e${id} = 0`, ...axes.map((axis) => `a${id}_${axis} = 0`));
-    if (isFlagged) declared.push(`w${id} = 0`);
+    locals = [`l${id}`, `u${id}`];
+    if (affine) locals.push(`c${id}`, `e${id}`, ...axes.map((axis) => `a${id}_${axis}`));
+    if (isFlagged) locals.push(`w${id}`);
+    lines.push(`{ let ${locals.map((name) => `${name} = 0.5`).join(', ')};`);
+  }
+
+  function end(): void {
+    lines.push(`${locals.map((name) => `${slot(name)} = ${name};`).join(' ')} }`);
+    nodesInPart++;
   }
 
   function emitComputation(id: NodeId, node: Node): void {
@@ -174,16 +202,35 @@ export function generateIntervals(
         if (node.op === 'neg') {
           begin(id, axes, args);
           lines.push(`l${id} = -${x.upper}; u${id} = -${x.lower};`);
-          if (affine) lines.push(`c${id} = -${x.centre}; e${id} = ${x.error};`, ...axes.map((axis) => `a${id}_${axis} = -${x.coefficient(axis)};`));
+          if (affine)
+            lines.push(
+              `c${id} = -${x.centre}; e${id} = ${x.error};`,
+              ...axes.map((axis) => `a${id}_${axis} = -${x.coefficient(axis)};`),
+            );
         } else if (node.op === 'abs') {
           begin(id, axes, args);
           emitAbsolute(id, axes, x);
-        } else emitFunction(id, axes, node.op, x, argumentsOf(node)[0] as NodeId, guards.get(id) as ReadonlyMap<string, Guard>);
+        } else
+          emitFunction(
+            id,
+            axes,
+            node.op,
+            x,
+            argumentsOf(node)[0] as NodeId,
+            guards.get(id) as ReadonlyMap<string, Guard>,
+          );
         return;
       }
       case 'power': {
         const [x] = args as [Operand];
-        emitFunction(id, axes, [node.exponent.s * node.exponent.n, node.exponent.d], x, node.args[0], guards.get(id) as ReadonlyMap<string, Guard>);
+        emitFunction(
+          id,
+          axes,
+          [node.exponent.s * node.exponent.n, node.exponent.d],
+          x,
+          node.args[0],
+          guards.get(id) as ReadonlyMap<string, Guard>,
+        );
         return;
       }
       case 'binary': {
@@ -276,10 +323,7 @@ export function generateIntervals(
     const squares = shared.map((axis) => `${a.coefficient(axis)} * ${b.coefficient(axis)}`);
     const centreTerms = [`${a.centre} * ${b.centre}`, ...squares.map((text) => `0.5 * (${text})`)];
     lines.push(`c${id} = ${centreTerms.join(' + ')};`);
-    const sizes = [
-      `Math.abs(${a.centre} * ${b.centre})`,
-      ...squares.map((text) => `Math.abs(${text})`),
-    ];
+    const sizes = [`Math.abs(${a.centre} * ${b.centre})`, ...squares.map((text) => `Math.abs(${text})`)];
     for (const axis of axes) {
       const parts = [
         ...(b.axes.includes(axis) ? [`${a.centre} * ${b.coefficient(axis)}`] : []),
@@ -288,7 +332,8 @@ export function generateIntervals(
       lines.push(`a${id}_${axis} = ${parts.join(' + ')};`);
       sizes.push(...parts.map((text) => `Math.abs(${text})`));
     }
-    const halfSquares = squares.length === 0 ? '' : ` - 0.5 * (${squares.map((text) => `Math.abs(${text})`).join(' + ')})`;
+    const halfSquares =
+      squares.length === 0 ? '' : ` - 0.5 * (${squares.map((text) => `Math.abs(${text})`).join(' + ')})`;
     lines.push(
       `t = ${sizes.join(' + ')}; r = ${radius(a)}; q = ${radius(b)};`,
       `e${id} = (Math.abs(${a.centre}) * ${b.error} + Math.abs(${b.centre}) * ${a.error} + (r * q * ${above}${halfSquares}) + (t + r * q) * 8.881784197001252e-16 + ${underflow}) * ${above};`,
@@ -321,26 +366,24 @@ export function generateIntervals(
     if (x.constant !== undefined) {
       const [value] = evaluateIntervals(
         graph,
-        [graph.intern({ kind: 'binary', op: 'div', args: [graph.intern({ kind: 'rational', value: one }), denominator] })],
+        [
+          graph.intern({
+            kind: 'binary',
+            op: 'div',
+            args: [graph.intern({ kind: 'rational', value: one }), denominator],
+          }),
+        ],
         new Map(),
       );
-      if (value?.defined) return constantOperand([value.lower, value.upper]);
-      throw new RangeError('division by a constant that may be zero');
+      return constantOperand(value as EnclosedValue);
     }
-    const key = `${denominator} ${open ?? ''}`;
+    const key = `${denominator} ${[...guarding.keys()].sort().join()}`;
     const known = reciprocals.get(key);
     if (known !== undefined) return known;
     const name = `${denominator}_i${reciprocals.size}`;
     emitFunction(name, x.axes, [-1n, 1n], x, denominator, guarding);
-    const made: Operand = {
-      lower: `l${name}`,
-      upper: `u${name}`,
-      centre: `c${name}`,
-      error: `e${name}`,
-      axes: x.axes,
-      coefficient: (axis) => `a${name}_${axis}`,
-      outside: `w${name}`,
-    };
+    end();
+    const made = stored(name, x.axes, true);
     reciprocals.set(key, made);
     return made;
   }
@@ -348,7 +391,10 @@ export function generateIntervals(
   function emitAbsolute(id: NodeId, axes: readonly number[], x: Operand): void {
     const copy = (sign: string) =>
       affine
-        ? [`c${id} = ${sign}${x.centre}; e${id} = ${x.error};`, ...axes.map((axis) => `a${id}_${axis} = ${sign}${x.coefficient(axis)};`)].join(' ')
+        ? [
+            `c${id} = ${sign}${x.centre}; e${id} = ${x.error};`,
+            ...axes.map((axis) => `a${id}_${axis} = ${sign}${x.coefficient(axis)};`),
+          ].join(' ')
         : '';
     lines.push(
       `if (${x.lower} >= 0) { l${id} = ${x.lower}; u${id} = ${x.upper}; ${copy('')} }`,
@@ -400,9 +446,7 @@ export function generateIntervals(
   function copyText(id: NodeId, axes: readonly number[], x: Operand): string {
     const interval = `l${id} = ${x.lower}; u${id} = ${x.upper};`;
     if (!affine) return interval;
-    const coefficients = axes.map(
-      (axis) => `a${id}_${axis} = ${x.axes.includes(axis) ? x.coefficient(axis) : '0'};`,
-    );
+    const coefficients = axes.map((axis) => `a${id}_${axis} = ${x.axes.includes(axis) ? x.coefficient(axis) : '0'};`);
     return [interval, `c${id} = ${x.centre}; e${id} = ${x.error};`, ...coefficients].join(' ');
   }
 
@@ -443,3 +487,8 @@ export function generateIntervals(
     return functions.length - 1;
   }
 }
+
+/** V8 takes seconds to optimise one function of thousands of operations, and milliseconds for each of many small ones. */
+const nodesPerPart = 5;
+
+const one = rational(1);

@@ -22,7 +22,6 @@ export interface IntervalKernel {
   evaluate(boxes: Float64Array, offset: number, out: Float64Array): void;
   /** Numbers in `out` for each output. */
   readonly stride: number;
-  readonly source: string;
 }
 
 type Compiled = (
@@ -30,6 +29,7 @@ type Compiled = (
   offset: number,
   out: Float64Array,
   R: Scratch,
+  V: Float64Array,
   images: readonly ((scratch: Scratch) => void)[],
   lines: readonly ((scratch: Scratch) => void)[],
   multiply: (scratch: Scratch) => void,
@@ -46,8 +46,10 @@ export function compileIntervals(
   variables: readonly string[],
   options: IntervalOptions = { affine: true },
 ): IntervalKernel {
-  const { source, functions } = generateIntervals(graph, outputs, variables, options);
-  const compiled = new Function('box', 'offset', 'out', 'R', 'images', 'lines', 'multiply', source) as Compiled;
+  const { parts, functions, slots } = generateIntervals(graph, outputs, variables, options);
+  const compiled = parts.map(
+    (part) => new Function('box', 'offset', 'out', 'R', 'V', 'images', 'lines', 'multiply', part) as Compiled,
+  );
   const smooth = functions.map((name): Smooth => {
     if (typeof name === 'string') return smoothFunctions[name];
     return powerFunction(rational(name[0], name[1]));
@@ -55,10 +57,13 @@ export function compileIntervals(
   const scratch = makeScratch();
   const images = smooth.map((f) => (registers: Scratch) => imageOf(f, registers));
   const lines = smooth.map((f) => (registers: Scratch) => lineThrough(f, registers));
+  const kept = new Float64Array(slots);
   return {
-    source,
     stride: outcome.axes + variables.length,
-    evaluate: (boxes, offset, out) => compiled(boxes, offset, out, scratch, images, lines, multiply),
+    evaluate: (boxes, offset, out) => {
+      for (let part = 0; part < compiled.length; part++)
+        (compiled[part] as Compiled)(boxes, offset, out, scratch, kept, images, lines, multiply);
+    },
   };
 }
 

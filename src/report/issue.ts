@@ -92,11 +92,12 @@ function findingIssue(functional: FunctionalFindings, finding: Finding, changes:
 export function findingMessage(functional: FunctionalFindings, finding: Finding): string {
   const { name } = functional;
   if (finding.verdict === 'undecided') return `${name}: undecided whether ${finding.requirement}: ${finding.reason}`;
+  const gate = `${gateWords[finding.gate]}: ${finding.gateReason}`;
+  if (finding.rule === true) return `${name} breaks the rule ${finding.constraint}: ${finding.reason}; ${gate}`;
   const place = placeWords(finding, knownCoordinates(functional)).replaceAll('\u00a0', ' ');
   const margin = finding.margin === null ? '' : `, margin ${signedText(finding.margin, 6)}`;
   const share = finding.violatedShare === null ? '' : `, over ${percentText(finding.violatedShare)} of the domain`;
   const cause = finding.cause?.kind === 'printed-digits' ? `; ${finding.cause.text}` : '';
-  const gate = `${gateWords[finding.gate]}: ${finding.gateReason}`;
   return `${name} violates ${finding.requirement}${margin}${place === '' ? '' : ` at ${place}`}${share}${cause}; ${gate}`;
 }
 

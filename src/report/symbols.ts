@@ -4,6 +4,7 @@ const coordinateSymbols: Readonly<Record<string, string>> = {
   s: 's',
   alpha: 'α',
   q: 'q',
+  omega: 'ω',
   s_up: 's↑',
   s_dn: 's↓',
   cosine: 'cos θ',
@@ -45,3 +46,27 @@ export function answerSymbol(name: string): string {
   const [, input = '', part = 'xc'] = derivative;
   return `∂e_${part}/∂${coordinateSymbol(input)}`;
 }
+
+/** Greek letters by the names that parameters have. */
+export const greekLetters: Readonly<Record<string, string>> = {
+  alpha: 'α',
+  beta: 'β',
+  gamma: 'γ',
+  delta: 'δ',
+  epsilon: 'ε',
+  zeta: 'ζ',
+  eta: 'η',
+  theta: 'θ',
+  kappa: 'κ',
+  lambda: 'λ',
+  mu: 'μ',
+  nu: 'ν',
+  xi: 'ξ',
+  rho: 'ρ',
+  sigma: 'σ',
+  tau: 'τ',
+  phi: 'φ',
+  chi: 'χ',
+  psi: 'ψ',
+  omega: 'ω',
+};

@@ -71,7 +71,7 @@ export function overviewLines(functional: FunctionalFindings, width: number, pai
 }
 
 /** The margin for a glance; `≈ 0` where it is zero but for round-off and the condition holds. */
-function marginText({ margin, verdict, tolerance }: Finding): string {
+export function marginText({ margin, verdict, tolerance }: Finding): string {
   if (margin === null) return '';
   if (verdict !== 'violated' && margin !== 0 && Math.abs(margin) <= Math.min(tolerance, 1e-9)) return '≈ 0';
   return signedText(margin);
@@ -83,7 +83,9 @@ function placeOf(finding: Finding, known: readonly string[]): string {
   return isIdentity ? '' : placeWords(finding, known);
 }
 
-function shareText({ verdict, violatedShare, points }: Finding): string {
+function shareText({ verdict, violatedShare, points, rule }: Finding): string {
+  // A rule looks at other things than points of the domain.
+  if (rule === true) return '';
   if (verdict === 'proved') return 'nowhere';
   if (verdict === 'holds') return `0 of ${countText(points)}`;
   if (verdict !== 'violated' || violatedShare === null) return '';
@@ -93,7 +95,7 @@ function shareText({ verdict, violatedShare, points }: Finding): string {
 /** `1e-9`, or which conditions have which tolerance. */
 export function toleranceWords(findings: readonly Finding[]): string {
   const groups = groupBy(
-    findings.filter(({ verdict }) => verdict !== 'not-applicable'),
+    findings.filter(({ verdict, rule }) => verdict !== 'not-applicable' && rule !== true),
     ({ tolerance, relative }) => `${shortText(tolerance)}${relative ? ' (relative)' : ''}`,
   ).sort(([, a], [, b]) => b.length - a.length);
   const [most, ...others] = groups;

@@ -1,4 +1,4 @@
-import type { Finding, Findings, FunctionalFindings } from '../finding/finding.ts';
+import type { Finding, Findings, FunctionalFindings, Remark } from '../finding/finding.ts';
 import { countFindings, exitStatusOf } from '../finding/gate-counts.ts';
 import { labelled, setColumns } from './layout.ts';
 import { countText, shortText } from './number-text.ts';
@@ -13,6 +13,8 @@ export interface TableOptions {
   readonly colour: boolean;
   /** The run ends with status 0 whatever is found. */
   readonly exitZero?: boolean;
+  /** The last line, where the exit status does not follow from the findings alone. */
+  readonly closing?: string | undefined;
 }
 
 const labelWidth = 13;
@@ -24,8 +26,9 @@ export function vetTable(findings: Findings, options: TableOptions): string {
   const paint = makePaint(options.colour);
   const blocks = findings.functionals.map((functional) => functionalLines(functional, width, paint));
   const several = findings.functionals.length > 1 ? [togetherLines(findings.functionals, paint)] : [];
-  const closing = labelled('', exitWords(findings, options.exitZero === true), 0, width);
-  return `${[...blocks, ...several, closing].map((lines) => lines.join('\n')).join('\n\n')}\n`;
+  const remarks = remarkLines(findings.remarks ?? [], width, paint);
+  const closing = labelled('', options.closing ?? exitWords(findings, options.exitZero === true), 0, width);
+  return `${[...blocks, ...several, ...remarks, closing].map((lines) => lines.join('\n')).join('\n\n')}\n`;
 }
 
 function functionalLines(functional: FunctionalFindings, width: number, paint: Paint): string[] {
@@ -93,7 +96,7 @@ function lookedLines(functional: FunctionalFindings, width: number): string[] {
   const others = groupBy(tried, (finding) => ownDomainWords(finding, common)).filter(([words]) => words !== '');
   const constants = new Map(tried.flatMap(({ constants: own }) => Object.entries(own)));
   const chosen = [...constants].map(([name, value]) => `${name} = ${shortText(value, 10)}`).join(', ');
-  const holds = tried.filter(({ verdict }) => verdict === 'holds');
+  const holds = tried.filter(({ verdict, rule }) => verdict === 'holds' && rule !== true);
   return [
     ...labelled('domain', `${functional.domain.name}: ${domainWords(common)}`, labelWidth, width),
     ...others.flatMap(([words, group], index) =>
@@ -101,18 +104,43 @@ function lookedLines(functional: FunctionalFindings, width: number): string[] {
     ),
     ...labelled('tolerance', toleranceWords(functional.findings), labelWidth, width),
     ...labelled('constants', chosen, labelWidth, width),
+    ...labelled('carries', carriedWords(tried), labelWidth, width),
+    ...labelled('proved', provedWords(tried), labelWidth, width),
     ...(holds.length === 0 ? [] : labelled('holds', holdsWords(holds), labelWidth, width)),
   ];
 }
 
+/** What was read off the functional: which published constants it carries. */
+function carriedWords(findings: readonly Finding[]): string {
+  return findings.find(({ constraint }) => constraint === 'known-constants')?.reason ?? '';
+}
+
+/** On how many boxes; and what of those that hold was left undecided by the proof. */
+function provedWords(findings: readonly Finding[]): string {
+  const proofs = findings.flatMap(({ verdict, proof }) => (verdict === 'proved' && proof !== undefined ? [proof] : []));
+  const open = findings.flatMap(({ constraint, verdict, proof }) =>
+    verdict === 'holds' && proof !== undefined && proof.stop !== 'not-provable'
+      ? [`${shortText(100 * proof.undecidedShare, 2)} % of ${constraint}`]
+      : [],
+  );
+  const most = Math.max(0, ...proofs.map(({ boxes }) => boxes));
+  const proved = most === 0 ? '' : `by interval arithmetic, rounded outward, on up to ${countText(most)} boxes`;
+  const left = open.length === 0 ? '' : `not decided: ${open.join(', ')}`;
+  return [proved, left].filter((text) => text !== '').join('; ');
+}
+
 function holdsWords(findings: readonly Finding[]): string {
-  const counts = findings.map(({ points }) => points);
+  const scanned = findings.filter(({ sequences }) => sequences === undefined);
+  const counts = scanned.map(({ points }) => points);
+  const atPoints = findings.length - scanned.length;
+  const asked = atPoints === 0 ? '' : `${atPoints} asked at listed points, limits by two sequences`;
+  if (scanned.length === 0) return `no violation: ${asked}; not a proof`;
   const [least, most] = [Math.min(...counts), Math.max(...counts)];
   const looked = least === most ? countText(least) : `${countText(least)} to ${countText(most)}`;
   const gaps = findings.filter(({ withoutValue }) => withoutValue > 0);
   const missing = gaps.map(({ constraint, withoutValue }) => `${countText(withoutValue)} in ${constraint}`);
   const without = gaps.length === 0 ? '' : `; points without a value: ${missing.join(', ')}`;
-  return `no violation in ${looked} points, refined where the margin is small; not a proof${without}`;
+  return `no violation in ${looked} points, refined where the margin is small${asked === '' ? '' : `; ${asked}`}; not a proof${without}`;
 }
 
 /** `2 of 14 conditions violated (1 fails, 1 warning); 11 hold, 1 undecided; 5 not asked`. */
@@ -165,6 +193,14 @@ function togetherLines(functionals: readonly FunctionalFindings[], paint: Paint)
   });
   const [heading, ...lines] = setColumns(columns, rows).map((cells) => cells.join('  '));
   return [paint('faint', heading ?? ''), ...lines];
+}
+
+/** What is to be told of the acceptances of the project file. */
+function remarkLines(remarks: readonly Remark[], width: number, paint: Paint): string[][] {
+  const lines = remarks.flatMap(({ file, line, functional, constraint, text }) =>
+    labelled('! acceptance', `${file}:${line}: ${functional} ${constraint}: ${text}`, labelWidth, width),
+  );
+  return lines.length === 0 ? [] : [lines.map((line) => paint('yellow', line))];
 }
 
 function exitWords(findings: Findings, exitZero: boolean): string {

@@ -2,6 +2,7 @@ import type { Finding, FunctionalFindings } from '../finding/finding.ts';
 import { bound, labelled, wrap } from './layout.ts';
 import { leadingDigits, percentText, roundTripText, shortText } from './number-text.ts';
 import type { Paint } from './paint.ts';
+import { sequenceWords } from './sequence.ts';
 import { coordinateSymbol } from './symbols.ts';
 import {
   commonDomain,
@@ -10,6 +11,7 @@ import {
   gateWords,
   knownCoordinates,
   ownDomainWords,
+  statusWords,
   verdictStyle,
 } from './words.ts';
 
@@ -31,14 +33,16 @@ export function violationLines(
   const room = width - 2;
   const own = ownDomainWords(finding, commonDomain(functional));
   const body = [
-    ...labelled('requires', `${finding.requirement}, to within ${toleranceText(finding)}`, labelWidth, room),
-    ...labelled('margin', marginWords(finding), labelWidth, room),
+    ...labelled('requires', requirementWords(finding), labelWidth, room),
+    ...labelled('found', finding.rule === true ? finding.reason : '', labelWidth, room),
+    ...labelled('margin', finding.rule === true ? '' : marginWords(finding), labelWidth, room),
     ...labelled('worst at', fullPlace(finding, knownCoordinates(functional)), labelWidth, room),
     ...labelled('where', regionWords(finding), labelWidth, room),
     ...labelled('boundary', crossingWords(finding), labelWidth, room),
+    ...sequenceWords(finding).flatMap((text, index) => labelled(index === 0 ? 'found' : '', text, labelWidth, room)),
     ...labelled('looked at', own, labelWidth, room),
     ...labelled('cause', causeWords(finding), labelWidth, room),
-    ...labelled('status', `${finding.status}; the local form is ${forceWords[finding.force]}`, labelWidth, room),
+    ...labelled('status', standingWords(finding), labelWidth, room),
     ...labelled('counts as', `${gateNames[finding.gate]}: ${finding.gateReason}`, labelWidth, room),
   ];
   const style = verdictStyle(finding.verdict, finding.gate);
@@ -47,19 +51,35 @@ export function violationLines(
   return [...heading, ...body].map((line) => `${rail} ${line}`);
 }
 
+function requirementWords(finding: Finding): string {
+  return finding.rule === true ? finding.requirement : `${finding.requirement}, to within ${toleranceText(finding)}`;
+}
+
+function standingWords({ rule, status, force }: Finding): string {
+  return rule === true ? statusWords[status] : `${status}; the local form is ${forceWords[force]}`;
+}
+
 function toleranceText({ tolerance, relative }: Finding): string {
   return `${shortText(tolerance)}${relative ? ' relative' : ''}`;
 }
 
-function marginWords({ margin, confirmed, confirmedDigits }: Finding): string {
+/** The margin with the digits that are sure. */
+export function marginWords({ margin, confirmed, confirmedDigits, sequences, proof }: Finding): string {
   if (confirmed !== null && confirmedDigits > 0) {
     const shown = leadingDigits(confirmed, Math.min(shownDigits, confirmedDigits));
-    return `${shown} (high precision, ${confirmedDigits} digits sure)`;
+    const certified = proof?.certifiedAtWitness === true ? '; certified by interval arithmetic' : '';
+    return `${shown} (high precision, ${confirmedDigits} digits sure${certified})`;
   }
-  return margin === null ? 'not known' : `${roundTripText(margin)} (double precision, not confirmed)`;
+  const unbounded = sequences?.some(({ value }) => value === null);
+  if (margin === null) return unbounded ? 'unbounded' : 'not known';
+  return `${roundTripText(margin)} (double precision, not confirmed)`;
 }
 
-function regionWords({ violatedShare, regions, moreRegions }: Finding): string {
+function regionWords({ violatedShare, regions, moreRegions, sequences, points }: Finding): string {
+  if (sequences !== undefined) {
+    const violated = Math.round((violatedShare ?? 0) * points);
+    return points === 1 ? '' : `${violated} of the ${points} points that it is asked at`;
+  }
   const share = violatedShare === null ? '' : `${percentText(violatedShare)} of the domain`;
   if (regions.length === 0) return share;
   const named = regions.map((region) =>

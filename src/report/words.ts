@@ -51,17 +51,27 @@ export const statusWords: Record<Finding['status'], string> = {
 const spinCoordinates = ['rs', 'zeta', 's_up', 's_dn', 'cosine', 'alpha_up', 'alpha_dn'] as const;
 const sliceCoordinates = ['rs', 'zeta', 's', 'alpha', 'q'] as const;
 
+/** What moves in the limits of a condition asked at points: `r_s → ∞`. */
+export function movingWords({ sequences }: Finding): string[] {
+  const limits = (sequences ?? []).filter(({ kind }) => kind !== 'coefficient');
+  const moving = limits.map(({ along, toward }) =>
+    bound(`${coordinateSymbol(along)} → ${toward === 'inf' ? '∞' : toward}`),
+  );
+  return [...new Set(moving)];
+}
+
 /** The coordinates of a witness that its condition and the functional depend on, in order. */
 export function witnessCoordinates(finding: Finding, known: readonly string[]): [name: string, value: number][] {
-  const { witness, irrelevant, domain } = finding;
+  const { witness, irrelevant, domain, sequences } = finding;
   if (witness === null) return [];
+  const moving = (sequences ?? []).flatMap(({ along, kind }) => (kind === 'coefficient' ? [] : [along]));
   const isSpin = domain.space === 'spin';
   const swept = domain.coordinates.map(({ name }) => name);
   const names: readonly (keyof Witness)[] = isSpin ? spinCoordinates : sliceCoordinates;
   return names.flatMap((name): [string, number][] => {
     const value = witness[name];
     const matters = isSpin ? swept.includes(name) : known.includes(name) && !irrelevant.includes(name);
-    return value === undefined || !matters ? [] : [[name, value]];
+    return value === undefined || !matters || moving.includes(name) ? [] : [[name, value]];
   });
 }
 
@@ -71,9 +81,10 @@ export function placeWords(finding: Finding, known: readonly string[]): string {
   const given = witnessCoordinates(finding, known).map(([name, value]) =>
     bound(`${coordinateSymbol(name)} ${shortText(value, 4)}`),
   );
+  const moving = movingWords(finding);
   const rest = irrelevantCoordinates(finding, known);
-  if (given.length === 0) return 'everywhere alike';
-  return [...given, ...(rest.length === 0 ? [] : [bound(`every ${rest.join(', ')}`)])].join(', ');
+  if (given.length === 0 && moving.length === 0) return 'everywhere alike';
+  return [...moving, ...given, ...(rest.length === 0 ? [] : [bound(`every ${rest.join(', ')}`)])].join(', ');
 }
 
 /** The witness to compute with: `r_s = 0.5120345678901234, ζ = 1, s = 2.1; any α`. */
@@ -82,7 +93,10 @@ export function fullPlace(finding: Finding, known: readonly string[]): string {
     bound(`${coordinateSymbol(name)} = ${roundTripText(value)}`),
   );
   const rest = irrelevantCoordinates(finding, known);
-  const parts = [given.join(', '), rest.length === 0 ? '' : bound(`any ${rest.join(', ')}`)];
+  const parts = [
+    [...movingWords(finding), ...given].join(', '),
+    rest.length === 0 ? '' : bound(`any ${rest.join(', ')}`),
+  ];
   return parts.filter((part) => part !== '').join('; ') || 'everywhere alike';
 }
 

@@ -37,5 +37,5 @@ function escaped(text: string, inAttribute: boolean): string {
 /** XML 1.0, section 2.2: most control characters and lone surrogates have no place in a document. */
 function withoutForbidden(text: string): string {
   // biome-ignore lint/suspicious/noControlCharactersInRegex: control characters are what is removed
-  return text.toWellFormed().replace(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\ufffe\uffff]/g, '\ufffd');
+  return text.replace(/[\u0000-\u0008\u000b\u000c\u000e-\u001f\ufffe\uffff]|\p{Surrogate}/gu, '\ufffd');
 }

@@ -1,20 +1,15 @@
-import { readdirSync, readFileSync, statSync } from 'node:fs';
-import { basename, dirname, join, relative } from 'node:path';
+import { readFileSync, statSync } from 'node:fs';
+import { dirname } from 'node:path';
 import { type ConstraintDefinition, parseConstraintSheet } from '../definition/constraint.ts';
 import { type FunctionalDefinition, parseFunctionalSheet } from '../definition/functional.ts';
 import { failure, type Outcome, type Problem, type ProblemCode } from '../errors/problem.ts';
 import { suggestion } from '../errors/suggest.ts';
 import type { Functional } from '../functional/functional.ts';
 import { linkFunctional } from '../functional/link.ts';
+import { findFile, idsIn, isSheetPath, type ShelfFolders, sheetId, shownPath } from './sheet-files.ts';
 
 /** Larger files are refused unread. */
 const largestSheet = 256 * 1024;
-
-/** Folders that hold one sheet per file; earlier folders win over later ones. */
-export interface ShelfFolders {
-  readonly functionals: readonly string[];
-  readonly constraints: readonly string[];
-}
 
 /** The sheets of some folders, read when first asked for. */
 export interface Shelf {
@@ -41,7 +36,7 @@ export function openShelf(folders: ShelfFolders): Shelf {
     functionalIds,
     constraintIds,
     functional(idOrPath) {
-      const isPath = /[/\\]|\.ya?ml$/.test(idOrPath);
+      const isPath = isSheetPath(idOrPath);
       // Sheets beside the given one can be imported by it.
       const searched = isPath ? [dirname(idOrPath), ...folders.functionals] : folders.functionals;
       const own = isPath ? readSheet(idOrPath, parseFunctionalSheet) : definitionOf(idOrPath, searched);
@@ -75,32 +70,10 @@ export function openShelf(folders: ShelfFolders): Shelf {
   };
 }
 
-function idsIn(folders: readonly string[]): string[] {
-  const ids = folders.flatMap((folder) =>
-    listFolder(folder).flatMap((file) => (/\.ya?ml$/.test(file) ? [file.replace(/\.ya?ml$/, '')] : [])),
-  );
-  return [...new Set(ids)].sort();
-}
-
-function listFolder(folder: string): string[] {
-  try {
-    return readdirSync(folder);
-  } catch {
-    return [];
-  }
-}
-
-function findFile(folders: readonly string[], id: string): string | undefined {
-  if (!/^[a-z0-9][a-z0-9-]*$/.test(id)) return undefined;
-  const candidates = folders.flatMap((folder) => [join(folder, `${id}.yaml`), join(folder, `${id}.yml`)]);
-  return candidates.find((path) => statSync(path, { throwIfNoEntry: false }) !== undefined);
-}
-
 type ParseSheet<Definition> = (text: string, origin: { file: string; id: string }) => Outcome<Definition>;
 
 function readSheet<Definition>(path: string, parse: ParseSheet<Definition>): Outcome<Definition> {
-  const file = relative(process.cwd(), path);
-  const shown = file === '' || file.startsWith('..') ? path : file;
+  const shown = shownPath(path);
   try {
     const stat = statSync(path);
     if (!stat.isFile()) return unreadable(shown, 'it is not a file');
@@ -114,7 +87,7 @@ function readSheet<Definition>(path: string, parse: ParseSheet<Definition>): Out
         ),
       ]);
     }
-    return parse(readFileSync(path, 'utf8'), { file: shown, id: basename(path).replace(/\.ya?ml$/, '') });
+    return parse(readFileSync(path, 'utf8'), { file: shown, id: sheetId(path) });
   } catch (error) {
     return unreadable(shown, reasonOf(error));
   }

@@ -27,9 +27,12 @@ describe('help', () => {
     },
   );
 
-  test('the version is that of the package', async () => {
+  test('the version is that of the package, with that of the catalogue', async () => {
     const { version } = JSON.parse(readFileSync(join(here, 'package.json'), 'utf8')) as { version: string };
-    expect(await run(['--version'])).toEqual({ status: 0, out: `${version}\n`, err: '' });
+    const { status, out, err } = await run(['--version']);
+    expect([status, err]).toEqual([0, '']);
+    expect(out).toMatch(/^\S+ \(catalogue [0-9a-f]{12}: \d+ functionals, \d+ conditions\)\n$/);
+    expect(out.split(' ')[0]).toBe(version);
   });
 });
 
@@ -37,9 +40,9 @@ describe('faulty requests end with status 2, problems on the error stream and no
   test.each([
     [[], /Usage/],
     [['vte', 'pbe'], /unknown command 'vte'.*\n.*Did you mean vet/],
-    [['vet'], /missing required argument/],
+    [['vet'], /no sheet is named/],
     [['vet', 'pbe', '--formt', 'json'], /unknown option '--formt'.*\n.*Did you mean --format/],
-    [['vet', 'pbe', '--format', 'xml'], /Allowed choices are table, json/],
+    [['vet', 'pbe', '--format', 'xml'], /Allowed choices are table, .*junit/],
     [['vet', 'pbee'], /no functional pbee.*\n.*Did you mean pbe/],
     [['vet', './none.yaml'], /none\.yaml: cannot read the file/],
     [['vet', 'pbe', '--only', 'lieb-oxfrod'], /Did you mean lieb-oxford/],

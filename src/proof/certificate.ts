@@ -1,0 +1,86 @@
+import { createHash } from 'node:crypto';
+import type { Condition } from '../constraint/condition.ts';
+import { customDomain, type Domain, type DomainCoordinate, domainCoordinates } from '../constraint/domain.ts';
+import type { Certificate } from '../finding/certificate.ts';
+import type { Functional } from '../functional/functional.ts';
+import { type Rational, rationalText } from '../number/rational.ts';
+import type { BranchResult } from '../search/branch.ts';
+import type { Claim, ClaimSettings } from './claim.ts';
+
+/** The hash of a functional: of its sheet and of all that it uses. */
+export function functionalHash({ definition, imports }: Functional): string {
+  const used = definition.uses.map(({ alias }) => functionalHash(imports.get(alias)?.functional as Functional));
+  return hashOf(['functional', definition.id, definition.text, ...used]);
+}
+
+export function constraintHash({ definition, imports }: Condition): string {
+  const used = definition.uses.map(({ alias }) => functionalHash(imports.get(alias) as Functional));
+  return hashOf(['constraint', definition.id, definition.text, ...used]);
+}
+
+function hashOf(parts: readonly string[]): string {
+  return createHash('sha256').update(JSON.stringify(parts)).digest('hex');
+}
+
+/** The certificate of a decided proof. */
+export function certificateOf(
+  condition: Condition,
+  functional: Functional,
+  settings: ClaimSettings,
+  claim: Claim,
+  result: BranchResult,
+  engineVersion: string,
+): Certificate {
+  const end = (value: number) => (Number.isFinite(value) ? value : null);
+  const body = {
+    format: 'rungcheck certificate' as const,
+    formatVersion: 1 as const,
+    engineVersion,
+    functional: functional.definition.id,
+    functionalHash: functionalHash(functional),
+    constraint: condition.definition.id,
+    constraintHash: constraintHash(condition),
+    statement: condition.definition.requirement.text,
+    tolerance: claim.tolerance,
+    constants: textsOf(settings.constants),
+    parameters: textsOf(settings.parameters),
+    domain: domainCoordinates.map((name) => {
+      const { lower, upper } = settings.domain.axes[name];
+      return { name, lower: end(lower), upper: end(upper) };
+    }),
+    rewrites: [...claim.rewrites],
+    variables: claim.axes.map(({ lower, upper, scale, divisions }, index) => ({
+      name: claim.variables[index] as string,
+      lower: end(lower),
+      upper: end(upper),
+      scale,
+      divisions: [...divisions],
+    })),
+    boxes: result.boxes,
+    deepest: result.deepest,
+    tree: result.tree,
+  };
+  return { ...body, digest: digestOf(body) };
+}
+
+/** The digest of a certificate's other fields, in their order. */
+export function digestOf(certificate: Omit<Certificate, 'digest'>): string {
+  const { digest: _, ...body } = certificate as Certificate;
+  return createHash('sha256').update(JSON.stringify(body)).digest('hex');
+}
+
+function textsOf(values: ReadonlyMap<string, Rational>): Record<string, string> {
+  return Object.fromEntries([...values].map(([name, value]) => [name, rationalText(value)]));
+}
+
+/** The domain that a certificate names. */
+export function certifiedDomain({ domain }: Certificate): Domain {
+  return customDomain(
+    new Map(
+      domain.map(({ name, lower, upper }) => [
+        name as DomainCoordinate,
+        [lower ?? Number.NEGATIVE_INFINITY, upper ?? Number.POSITIVE_INFINITY] as const,
+      ]),
+    ),
+  );
+}

@@ -17,7 +17,18 @@ const mayImport: Record<string, readonly string[]> = {
   kernel: ['graph', 'interval', 'number'],
   functional: ['definition', 'expression', 'graph', 'number', 'errors'],
   shelf: ['definition', 'functional', 'errors'],
-  quality: ['definition', 'functional', 'evaluate', 'derivative', 'kernel', 'search', 'graph', 'number', 'errors'],
+  quality: [
+    'finding',
+    'definition',
+    'functional',
+    'evaluate',
+    'derivative',
+    'kernel',
+    'search',
+    'graph',
+    'number',
+    'errors',
+  ],
   extrapolate: ['number'],
   'closed-form': ['graph'],
   constraint: [
@@ -78,7 +89,7 @@ const mayImport: Record<string, readonly string[]> = {
     'number',
     'errors',
   ],
-  'page-script': ['page', 'figure', 'kernel', 'search', 'report'],
+  'page-script': ['page', 'finding', 'figure', 'kernel', 'search', 'report'],
   cli: [
     'closed-form',
     'errors',

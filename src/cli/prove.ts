@@ -76,7 +76,7 @@ export function proveCommand(sheet: string, constraint: string, options: ProveOp
   const report: ProofReport = {
     functional: functional.definition.id,
     constraint,
-    requirement: condition.definition.localForm ?? condition.definition.requirement.text,
+    requirement: condition.definition.requirement.text,
     tolerance: condition.definition.tolerance,
     domain: wordsOf(domain, [...(claim?.variables ?? [])]),
     proof: record,

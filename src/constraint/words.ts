@@ -1,24 +1,12 @@
+import { coordinateSymbol } from '../finding/symbols.ts';
 import type { Extent } from '../search/region.ts';
-
-const symbols: Readonly<Record<string, string>> = {
-  rs: 'r_s',
-  zeta: 'ζ',
-  s: 's',
-  alpha: 'α',
-  q: 'q',
-  s_up: 's↑',
-  s_dn: 's↓',
-  cosine: 'cos θ',
-  alpha_up: 'α↑',
-  alpha_dn: 'α↓',
-};
 
 /** A region as a person would say it: `1.96 ≤ s ≤ 2.28, r_s ≤ 1.2, every ζ`; ends to three digits. */
 export function regionWords(hull: readonly Extent[]): string {
   const limited: string[] = [];
   const whole: string[] = [];
   for (const { axis, lower, upper, touchesLower, touchesUpper, spans } of hull) {
-    const symbol = symbols[axis] ?? axis;
+    const symbol = coordinateSymbol(axis);
     if (lower === upper) limited.push(`${symbol} = ${short(lower)}`);
     else if (spans) whole.push(symbol);
     else if (touchesUpper)

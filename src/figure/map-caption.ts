@@ -1,5 +1,5 @@
 import type { MapPanel, MarginMap } from '../finding/margin-map.ts';
-import { coordinateSymbol } from '../report/symbols.ts';
+import { coordinateSymbol } from '../finding/symbols.ts';
 import { forceNames } from '../report/words.ts';
 import { hasGaps } from './gaps.ts';
 import type { Levels } from './levels.ts';

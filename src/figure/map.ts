@@ -1,5 +1,5 @@
 import type { MapPanel, MarginMap } from '../finding/margin-map.ts';
-import { coordinateSymbol } from '../report/symbols.ts';
+import { coordinateSymbol } from '../finding/symbols.ts';
 import { ink } from './colour.ts';
 import { type Box, belowFrame, centred, frame, labelsWidth, upright } from './frame.ts';
 import { chooseLevels, type Levels } from './levels.ts';

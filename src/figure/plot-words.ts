@@ -1,5 +1,6 @@
 import type { Curve, CurveSet } from '../finding/curves.ts';
-import { answerSymbol, coordinateSymbol } from '../report/symbols.ts';
+import { coordinateSymbol } from '../finding/symbols.ts';
+import { answerSymbol } from '../report/symbols.ts';
 import { drawnBounds } from './plot-range.ts';
 import { numberRuns } from './scale.ts';
 import { listed, noBreak, parameterSymbol, setTo } from './symbols.ts';

@@ -1,4 +1,5 @@
-import { coordinateSymbol, greekLetters } from '../report/symbols.ts';
+import { coordinateSymbol } from '../finding/symbols.ts';
+import { greekLetters } from '../report/symbols.ts';
 import { numberRuns } from './scale.ts';
 import { lineWidth, type Run } from './typeface.ts';
 import { formula, words } from './typeset.ts';

@@ -1,7 +1,8 @@
 import { argumentsOf, type NodeId } from '../graph/graph.ts';
 import { nodeText, numberText } from './operators.ts';
+import type { AxisMask } from './order.ts';
 import { bitCount, prefixLength } from './order.ts';
-import type { AxisMask, Plan } from './plan.ts';
+import type { Plan } from './plan.ts';
 
 /** A table of every exported node of one mask, interleaved; its index runs over the axes not yet bound where it is filled. */
 export interface Table {

@@ -1,4 +1,5 @@
-import type { AxisMask } from './plan.ts';
+/** A set of axes, bit a for axis a. */
+export type AxisMask = number;
 
 /** An axis length to assume where none is given. */
 const assumedLength = 32;

@@ -3,15 +3,12 @@ import { reachable } from '../graph/traverse.ts';
 import { toNumber } from '../number/rational.ts';
 import { evaluateDecimal } from './decimal.ts';
 import { lowerPowers } from './lower.ts';
-import { chooseLoopOrder } from './order.ts';
+import { type AxisMask, chooseLoopOrder } from './order.ts';
 
 /** One loop of a kernel. All its variables advance together, so several make a list of points. */
 export interface AxisGroup {
   readonly variables: readonly string[];
 }
-
-/** A set of axes, bit a for axis a. */
-export type AxisMask = number;
 
 /** What is to be computed, and in which loops; independent of the language it is written in. */
 export interface Plan {

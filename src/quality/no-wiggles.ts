@@ -1,8 +1,9 @@
+import { coordinateSymbol } from '../finding/symbols.ts';
 import { atPoints } from './at-points.ts';
 import { type EnergyGraph, type SliceName, sliceEnergies } from './energies.ts';
 import { derivativesAlong } from './partials.ts';
 import type { Rule, SlicePoint } from './rule.ts';
-import { derivativeWords, shown, symbolOf } from './words.ts';
+import { derivativeWords, shown } from './words.ts';
 
 /** Lines within the realistic box along which the shape of F is read. */
 const lines = {
@@ -70,7 +71,7 @@ function shapeWords({ symbol, along, extrema, inflections, curvature }: Shape): 
   const counted = (count: number, one: string, many: string) => `${count} ${count === 1 ? one : many}`;
   const turns = `${counted(extrema.count, 'extremum', 'extrema')}, ${counted(inflections.count, 'inflection', 'inflections')}`;
   const second = derivativeWords({ symbol, by: [along, along] });
-  return `${symbol} along ${symbolOf(along)}: ${turns}, |${second}| ≤ ${shown(curvature.size)}`;
+  return `${symbol} along ${coordinateSymbol(along)}: ${turns}, |${second}| ≤ ${shown(curvature.size)}`;
 }
 
 function shapesAlong({ graph, energies, variables }: EnergyGraph<SliceName>, along: Along): Shape[] {

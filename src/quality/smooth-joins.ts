@@ -1,3 +1,4 @@
+import { coordinateSymbol } from '../finding/symbols.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { evaluateDecimal } from '../kernel/decimal.ts';
 import { type Decimal, decimalContext } from '../number/decimal.ts';
@@ -5,7 +6,7 @@ import { type Energy, sliceEnergies } from './energies.ts';
 import { derivativesAlong } from './partials.ts';
 import type { Rule, SlicePoint } from './rule.ts';
 import { findJoins, type Join, switchesOf } from './switches.ts';
-import { derivativeWords, pointWords, shown, symbolOf } from './words.ts';
+import { derivativeWords, pointWords, shown } from './words.ts';
 
 const digits = 50;
 /** Distance from the join of the two points that are compared. */
@@ -123,7 +124,7 @@ function placesOf(sorted: readonly Jumps[], threshold: number): string[] {
   return sorted.flatMap((jumps) => {
     const { join, energy, sizes } = jumps;
     const place = join.isFixed
-      ? `${symbolOf(join.axis)} = ${shown(join.at, 6)}`
+      ? `${coordinateSymbol(join.axis)} = ${shown(join.at, 6)}`
       : `a surface through ${pointWords(pointOf(join))}`;
     const key = `${join.isFixed ? place : join.difference} ${energy.symbol}`;
     if (seen.has(key)) return [];

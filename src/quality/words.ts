@@ -1,29 +1,12 @@
-const symbols: Readonly<Record<string, string>> = {
-  rs: 'r_s',
-  zeta: 'ζ',
-  alpha: 'α',
-  n_up: 'n↑',
-  n_dn: 'n↓',
-  sigma_uu: 'σ↑↑',
-  sigma_ud: 'σ↑↓',
-  sigma_dd: 'σ↓↓',
-  tau_up: 'τ↑',
-  tau_dn: 'τ↓',
-  lapl_up: '∇²n↑',
-  lapl_dn: '∇²n↓',
-};
+import { coordinateSymbol } from '../finding/symbols.ts';
 
 const raised = ['', '', '²', '³', '⁴'];
-
-export function symbolOf(name: string): string {
-  return symbols[name] ?? name;
-}
 
 /** `F_c`, `∂F_c/∂ζ`, `∂²F_x/∂s∂α`, `∂²F_x/∂α²`. */
 export function derivativeWords({ symbol, by }: { readonly symbol: string; readonly by: readonly string[] }): string {
   if (by.length === 0) return symbol;
   const power = raised[by.length] ?? `^${by.length}`;
-  const names = by.map(symbolOf);
+  const names = by.map(coordinateSymbol);
   const below = new Set(names).size === 1 ? `∂${names[0]}${power}` : names.map((name) => `∂${name}`).join('');
   return `∂${power}${symbol}/${below}`;
 }
@@ -32,7 +15,7 @@ export function derivativeWords({ symbol, by }: { readonly symbol: string; reado
 export function pointWords(point: Readonly<Record<string, number | undefined>>): string {
   return Object.entries(point)
     .filter((entry): entry is [string, number] => entry[1] !== undefined)
-    .map(([name, value]) => `${symbolOf(name)} = ${shown(value, 6)}`)
+    .map(([name, value]) => `${coordinateSymbol(name)} = ${shown(value, 6)}`)
     .join(', ');
 }
 

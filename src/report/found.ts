@@ -1,9 +1,9 @@
 import type { Finding, FunctionalFindings } from '../finding/finding.ts';
+import { coordinateSymbol } from '../finding/symbols.ts';
 import { bound, labelled } from './layout.ts';
 import { shortText, signedText } from './number-text.ts';
 import { makePaint } from './paint.ts';
 import { sequenceWords, termLines } from './sequence.ts';
-import { coordinateSymbol } from './symbols.ts';
 import { marginWords } from './vet-violation.ts';
 import { fullPlace, gateWords, knownCoordinates, verdictMarks, verdictStyle } from './words.ts';
 

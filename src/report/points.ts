@@ -1,8 +1,9 @@
+import { coordinateSymbol } from '../finding/symbols.ts';
 import { jsonText } from './json.ts';
 import { padEnd, padStart, setColumns, textWidth, wrap } from './layout.ts';
 import { roundTripText, shortText } from './number-text.ts';
 import { makePaint } from './paint.ts';
-import { answerSymbol, coordinateSymbol } from './symbols.ts';
+import { answerSymbol } from './symbols.ts';
 
 /** Values of a functional at points, ready to be written. */
 export interface PointsReport {

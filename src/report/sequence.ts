@@ -1,7 +1,7 @@
 import type { Finding, SequenceRecord } from '../finding/finding.ts';
+import { coordinateSymbol } from '../finding/symbols.ts';
 import { type Column, setColumns } from './layout.ts';
 import { shortText } from './number-text.ts';
-import { coordinateSymbol } from './symbols.ts';
 
 /** What was found for each limit and order at the worst point: `limit(Fx, s, inf) = 1.804 ± 1e-15 = 1 + kappa`. */
 export function sequenceWords({ sequences }: Finding): string[] {

@@ -1,25 +1,4 @@
-const coordinateSymbols: Readonly<Record<string, string>> = {
-  rs: 'r_s',
-  zeta: 'ζ',
-  s: 's',
-  alpha: 'α',
-  q: 'q',
-  omega: 'ω',
-  s_up: 's↑',
-  s_dn: 's↓',
-  cosine: 'cos θ',
-  alpha_up: 'α↑',
-  alpha_dn: 'α↓',
-  n_up: 'n↑',
-  n_dn: 'n↓',
-  sigma_uu: 'σ↑↑',
-  sigma_ud: 'σ↑↓',
-  sigma_dd: 'σ↓↓',
-  tau_up: 'τ↑',
-  tau_dn: 'τ↓',
-  lapl_up: '∇²n↑',
-  lapl_dn: '∇²n↓',
-};
+import { coordinateSymbol } from '../finding/symbols.ts';
 
 const answerSymbols: Readonly<Record<string, string>> = {
   eps_x: 'ε_x',
@@ -33,11 +12,6 @@ const answerSymbols: Readonly<Record<string, string>> = {
   d2Fc_drs2: '∂²F_c/∂r_s²',
   dFxc_drs: '∂F_xc/∂r_s',
 };
-
-/** The field's symbol of a coordinate; the name itself where there is none. */
-export function coordinateSymbol(name: string): string {
-  return coordinateSymbols[name] ?? name;
-}
 
 /** The field's symbol of an answer of `at`: ε_x, F_c, ∂F_c/∂r_s, ∂e_x/∂n↑ (e: energy per volume) …. */
 export function answerSymbol(name: string): string {

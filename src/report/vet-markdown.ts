@@ -1,7 +1,7 @@
 import type { DomainRecord, Findings, FunctionalFindings } from '../finding/finding.ts';
+import { coordinateSymbol } from '../finding/symbols.ts';
 import { shortText, signedText } from './number-text.ts';
 import { type SupplementTable, supplementTable } from './supplement.ts';
-import { coordinateSymbol } from './symbols.ts';
 import { marginText, toleranceWords } from './vet-overview.ts';
 import { domainWords, verdictMarks } from './words.ts';
 

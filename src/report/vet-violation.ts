@@ -1,9 +1,9 @@
 import type { Finding, FunctionalFindings } from '../finding/finding.ts';
+import { coordinateSymbol } from '../finding/symbols.ts';
 import { bound, labelled, wrap } from './layout.ts';
 import { leadingDigits, percentText, roundTripText, shortText } from './number-text.ts';
 import type { Paint } from './paint.ts';
 import { sequenceWords } from './sequence.ts';
-import { coordinateSymbol } from './symbols.ts';
 import {
   commonDomain,
   forceWords,

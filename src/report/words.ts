@@ -1,8 +1,8 @@
 import type { DomainRecord, Finding, FunctionalFindings, Gate, Verdict, Witness } from '../finding/finding.ts';
+import { coordinateSymbol } from '../finding/symbols.ts';
 import { bound } from './layout.ts';
 import { roundTripText, shortText } from './number-text.ts';
 import type { Style } from './paint.ts';
-import { coordinateSymbol } from './symbols.ts';
 
 /** Symbol and word of a verdict; the word always stands beside the symbol and the colour. */
 export const verdictMarks: Record<Verdict, { readonly symbol: string; readonly word: string }> = {

@@ -16,7 +16,7 @@ function evaluate(
 const density = { n_up: '0.3', n_dn: '0.2', sigma_uu: '0', sigma_ud: '0', sigma_dd: '0', tau_up: '0.4', tau_dn: '0.3' };
 
 describe('edges are met by their limits', () => {
-  test('∂e/∂σ of B88 at vanishing gradient is −(LDA gradient-free) β n_σ^(−4/3) (closed form of its Eq. (8))', () => {
+  test('∂e/∂σ of B88 at vanishing gradient is −β n_σ^(−4/3) (closed form, from its Eq. (8))', () => {
     const at = evaluate('b88', 'density', density, { derivatives: true });
     expect(at.d_sigma_uu_x).toBeCloseTo(-0.0042 * 0.3 ** (-4 / 3), 12);
     expect(at.d_sigma_dd_x).toBeCloseTo(-0.0042 * 0.2 ** (-4 / 3), 12);

@@ -3,7 +3,7 @@ import { ProblemCollector } from './collector.ts';
 import { decimalNumber } from './field.ts';
 import { projectSheet } from './project-sheet.ts';
 import { checkShape } from './shape.ts';
-import { entriesOf, entryOf, given, itemsOf, type SheetNode, scalarOf, textOf, textsOf } from './tree.ts';
+import { entriesOf, entryOf, given, itemsOf, type SheetNode, scalarOf, textOf } from './tree.ts';
 import { parseYaml } from './yaml.ts';
 
 /** A text of the project file with its place. */

@@ -89,14 +89,14 @@ describe('the invented re-fit of the README', () => {
     const drift = find('functionals/demo/tern.yaml', 'exchange-coordinate-scaling');
     expect(drift.violatedShare).toBeGreaterThan(0.98);
     const spot = find('functionals/demo/tern.yaml', 'exchange-two-electron-bound');
-    expect(spot.regions[0]?.words).toBe('1.97 ≤ s ≤ 2.04, every r_s');
+    expect(spot.regions[0]?.words).toBe('r_s ≥ 0.872, 1.96 ≤ s ≤ 2.02');
     // 1 + 0.043 ζ²⁴ passes 1.02 at ζ = (0.02/0.043)^(1/24) = 0.96860 (closed form; the two gases differ by 2e-5).
     const open = find('functionals/demo/tern.yaml', 'correlation-uniform-gas');
     expect(open.through.find(({ coordinate }) => coordinate === 'zeta')?.lower).toBeCloseTo(
       (0.02 / 0.043) ** (1 / 24),
       4,
     );
-    // a0 + a1 = 0.9999, times 2^(1/3) at ζ = 1.
+    // a0 + a1 = −1e-4, times 2^(1/3) at ζ = 1.
     const digits = find('functionals/demo/tern.yaml', 'exchange-uniform-gas');
     expect(digits.margin).toBeCloseTo(-1e-4 * 2 ** (1 / 3), 12);
     expect(digits.cause?.kind).toBe('printed-digits');

@@ -91,7 +91,12 @@ export function listedConstraint({ id, title, part, force, status }: ConstraintD
   return { id, title, part, force, status };
 }
 
-export function explanationOf(definition: ConstraintDefinition): Explanation {
+/** What a condition's sheet says of it; `margins` has those of the functionals known to hold or to break it. */
+export function explanationOf(
+  definition: ConstraintDefinition,
+  margins: ReadonlyMap<string, string> = new Map(),
+): Explanation {
+  const known = (id: string) => (margins.has(id) ? `${id} (${margins.get(id)})` : id);
   const relative = definition.relative ? ', relative to the right-hand side' : '';
   return {
     id: definition.id,
@@ -119,8 +124,12 @@ export function explanationOf(definition: ConstraintDefinition): Explanation {
       with: conflict.with ?? null,
       reason: conflict.reason,
     })),
-    holds: definition.holds.map(({ id }) => id),
-    breaks: definition.breaks.map(({ id, where, source }) => ({ id, where: where ?? null, source: source ?? null })),
+    holds: definition.holds.map(({ id }) => known(id)),
+    breaks: definition.breaks.map(({ id, where, source }) => ({
+      id: known(id),
+      where: where ?? null,
+      source: source ?? null,
+    })),
     traps: definition.traps,
     sources: definition.sources,
   };

@@ -197,12 +197,14 @@ function addCatalogue(program: Command, terminal: Terminal, end: End): void {
       '--for <sheet or id>',
       'ask it of a functional too: verdict, witness, the margin around it, limiting sequences',
     )
+    .option('--margins', 'ask it of the functionals known to hold or to break it, and show their margins')
     .addOption(constraintsOption())
     .addHelpText(
       'after',
       examples(
         'Examples:',
         '  rungcheck explain lieb-oxford',
+        '  rungcheck explain lieb-oxford --margins',
         '  rungcheck explain exchange-gradient-second-order --for pbe',
       ),
     )

@@ -71,7 +71,7 @@ function reportOf(request: VetRequest, findings: Findings, command: string): str
   return reportPage({
     findings,
     functionals,
-    conditions: definitions.map(explanationOf),
+    conditions: definitions.map((definition) => explanationOf(definition)),
     kernels: pageKernels({ functionals, arguments: request.sheets, conditions, ...settings }, findings.functionals),
     script: asset('report-page.js'),
     style: asset('report-page.css'),

@@ -56,6 +56,13 @@ describe('explain --for', () => {
   });
 });
 
+test('--margins shows the margins of the known holders and breakers', async () => {
+  const { out } = await run(['explain', 'exchange-two-electron-bound', '--margins']);
+  // SCAN touches 1.174 at s = 0 (PRL 115, 036402); PBE exceeds it by 0.527 at s = 5 (closed form).
+  expect(out).toMatch(/scan \(0\)/);
+  expect(out).toMatch(/pbe \(-0\.527\)/);
+}, 60_000);
+
 test('vet finds a condition in a folder of the user', async () => {
   const { out } = await run(['vet', 'pbe', '--only', 'own-limit', '--constraints', folder, '--format', 'json']);
   const [finding] = JSON.parse(out).functionals[0].findings;

@@ -1,8 +1,9 @@
 import { differentiate } from '../derivative/differentiate.ts';
 import type { Functional } from '../functional/functional.ts';
 import { instantiate } from '../functional/instance.ts';
-import { densityPlace, type Place, slicePlace } from '../functional/place.ts';
-import { constant, mul, variable } from '../graph/build.ts';
+import type { Place } from '../functional/place.ts';
+import { densityNames, sliceNames, variableDensity, variableSlice } from '../functional/variable-place.ts';
+import { constant, mul } from '../graph/build.ts';
 import { Graph, type NodeId } from '../graph/graph.ts';
 import { evaluateCertified } from '../kernel/certify.ts';
 import { evaluateDecimal } from '../kernel/decimal.ts';
@@ -12,18 +13,7 @@ import type { Rational } from '../number/rational.ts';
 import { limitAtEdge } from './edge.ts';
 import { type Energies, energiesAt } from './energies.ts';
 
-export const sliceColumns = ['rs', 'zeta', 's', 'alpha', 'q'] as const;
-export const densityColumns = [
-  'n_up',
-  'n_dn',
-  'sigma_uu',
-  'sigma_ud',
-  'sigma_dd',
-  'tau_up',
-  'tau_dn',
-  'lapl_up',
-  'lapl_dn',
-] as const;
+export { densityNames as densityColumns, sliceNames as sliceColumns };
 
 export type PointSpace = 'slice' | 'density';
 
@@ -58,8 +48,8 @@ export function evaluatePoints(functional: Functional, request: PointsRequest): 
   const instance = instantiate(graph, functional, {
     parameters: new Map([...(request.parameters ?? [])].map(([name, value]) => [name, constant(graph, value)])),
   });
-  const inputs: readonly string[] = request.space === 'slice' ? sliceColumns : densityColumns;
-  const place = placeOf(graph, request.space);
+  const inputs: readonly string[] = request.space === 'slice' ? sliceNames : densityNames;
+  const place = request.space === 'slice' ? variableSlice(graph) : variableDensity(graph);
   const perParticle = energiesAt(instance, place, 'perParticle');
   const enhancement = energiesAt(instance, place, 'enhancement');
   const columns = new Map<string, NodeId | undefined>([
@@ -94,24 +84,6 @@ export function evaluatePoints(functional: Functional, request: PointsRequest): 
       return [...columns.values()].map((node) => (node === undefined ? null : (values[next++]?.[row] ?? null)));
     }),
   };
-}
-
-function placeOf(graph: Graph, space: PointSpace): Place {
-  const v = (name: string) => variable(graph, name);
-  if (space === 'slice') {
-    return slicePlace(graph, { rs: v('rs'), zeta: v('zeta'), s: v('s'), alpha: v('alpha'), q: v('q') });
-  }
-  return densityPlace(graph, {
-    n_up: v('n_up'),
-    n_dn: v('n_dn'),
-    sigma_uu: v('sigma_uu'),
-    sigma_ud: v('sigma_ud'),
-    sigma_dd: v('sigma_dd'),
-    tau_up: v('tau_up'),
-    tau_dn: v('tau_dn'),
-    lapl_up: v('lapl_up'),
-    lapl_dn: v('lapl_dn'),
-  });
 }
 
 function sliceDerivatives(graph: Graph, enhancement: Energies): [string, NodeId | undefined][] {

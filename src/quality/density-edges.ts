@@ -1,7 +1,7 @@
+import type { DensityName } from '../functional/variable-place.ts';
 import { type Decimal, decimalContext } from '../number/decimal.ts';
 import { pathDigits } from './approach.ts';
 import type { Edge } from './edges.ts';
-import type { DensityName } from './energies.ts';
 
 /** How a density is made: r = n↓/n↑ with parallel gradients, and what is added to τ_Wσ in units of n_σ^(5/3). */
 interface Recipe {

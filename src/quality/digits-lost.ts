@@ -1,10 +1,11 @@
 import { differentiate } from '../derivative/differentiate.ts';
+import type { SliceName } from '../functional/variable-place.ts';
 import { evaluateDecimal } from '../kernel/decimal.ts';
 import { compileKernel } from '../kernel/float64.ts';
 import { exactDecimal } from '../number/decimal.ts';
 import type { Axis } from '../search/axis.ts';
 import { samplePoints } from '../search/sample.ts';
-import { type SliceName, sliceEnergies } from './energies.ts';
+import { sliceEnergies } from './energies.ts';
 import type { Derivative } from './partials.ts';
 import type { Rule, SlicePoint } from './rule.ts';
 import { derivativeWords, pointWords, shown } from './words.ts';

@@ -1,28 +1,19 @@
 import { energiesAt } from '../evaluate/energies.ts';
 import type { Functional } from '../functional/functional.ts';
 import { instantiate } from '../functional/instance.ts';
-import { densityPlace, type Place, slicePlace } from '../functional/place.ts';
-import { constant, mul, variable } from '../graph/build.ts';
+import type { Place } from '../functional/place.ts';
+import {
+  type DensityName,
+  densityNames,
+  type SliceName,
+  sliceNames,
+  variableDensity,
+  variableSlice,
+} from '../functional/variable-place.ts';
+import { constant, mul } from '../graph/build.ts';
 import { Graph, type NodeId } from '../graph/graph.ts';
 import { variablesOf } from '../graph/traverse.ts';
 import type { Rational } from '../number/rational.ts';
-
-/** Coordinates of the slice. */
-export const sliceNames = ['rs', 'zeta', 's', 'alpha', 'q'] as const;
-export type SliceName = (typeof sliceNames)[number];
-
-export const densityNames = [
-  'n_up',
-  'n_dn',
-  'sigma_uu',
-  'sigma_ud',
-  'sigma_dd',
-  'tau_up',
-  'tau_dn',
-  'lapl_up',
-  'lapl_dn',
-] as const;
-export type DensityName = (typeof densityNames)[number];
 
 /** One energy of a functional, under the symbol that a reader knows. */
 export interface Energy {
@@ -42,31 +33,14 @@ type Parameters = ReadonlyMap<string, Rational>;
 /** F_x and F_c on the slice, or F_xc where the sheet gives only their sum. */
 export function sliceEnergies(functional: Functional, parameters: Parameters): EnergyGraph<SliceName> {
   const graph = new Graph();
-  const energies = energiesOf(graph, functional, parameters, slicePlaceIn(graph), 'enhancement');
+  const energies = energiesOf(graph, functional, parameters, variableSlice(graph), 'enhancement');
   return { graph, energies, variables: namesIn(sliceNames, graph, energies) };
-}
-
-/** The place whose coordinates are the variables of the slice. */
-export function slicePlaceIn(graph: Graph): Place {
-  const v = (name: SliceName) => variable(graph, name);
-  return slicePlace(graph, { rs: v('rs'), zeta: v('zeta'), s: v('s'), alpha: v('alpha'), q: v('q') });
 }
 
 /** Energies per volume, n ε_x and n ε_c, of spin densities, their gradients and kinetic-energy densities. */
 export function densityEnergies(functional: Functional, parameters: Parameters): EnergyGraph<DensityName> {
   const graph = new Graph();
-  const v = (name: DensityName) => variable(graph, name);
-  const place = densityPlace(graph, {
-    n_up: v('n_up'),
-    n_dn: v('n_dn'),
-    sigma_uu: v('sigma_uu'),
-    sigma_ud: v('sigma_ud'),
-    sigma_dd: v('sigma_dd'),
-    tau_up: v('tau_up'),
-    tau_dn: v('tau_dn'),
-    lapl_up: v('lapl_up'),
-    lapl_dn: v('lapl_dn'),
-  });
+  const place = variableDensity(graph);
   const energies = energiesOf(graph, functional, parameters, place, 'perParticle').map(({ symbol, node }) => ({
     symbol,
     node: mul(graph, place.total('n'), node),

@@ -1,12 +1,12 @@
 import { energiesAt } from '../evaluate/energies.ts';
 import type { Functional } from '../functional/functional.ts';
 import { exactExchangeShares, instantiate } from '../functional/instance.ts';
+import { sliceNames, variableSlice } from '../functional/variable-place.ts';
 import { constant } from '../graph/build.ts';
 import { Graph, type NodeId } from '../graph/graph.ts';
 import { evaluateDecimal } from '../kernel/decimal.ts';
 import type { Rational } from '../number/rational.ts';
 import { atPoints } from './at-points.ts';
-import { sliceNames, slicePlaceIn } from './energies.ts';
 import { type ConstantName, type PublishedConstant, publishedConstants } from './published-constants.ts';
 import { type BlackBox, type Reading, readConstants } from './read-constants.ts';
 import type { Rule } from './rule.ts';
@@ -88,7 +88,7 @@ function blackBoxOf(functional: Functional, parameters: ReadonlyMap<string, Rati
   const graph = new Graph();
   const changed = new Map([...parameters].map(([name, value]) => [name, constant(graph, value)]));
   const instance = instantiate(graph, functional, { parameters: changed });
-  const { x, c } = energiesAt(instance, slicePlaceIn(graph), 'perParticle');
+  const { x, c } = energiesAt(instance, variableSlice(graph), 'perParticle');
   const { exactExchange } = functional;
   const exact = exactExchange?.kind === 'global' ? exactExchangeShares(instance).longRange : undefined;
   const share = exact === undefined ? 1 : 1 - (evaluateDecimal(graph, [exact], new Map(), 30)[0]?.toNumber() ?? 0);

@@ -1,6 +1,7 @@
 import { coordinateSymbol } from '../finding/symbols.ts';
+import type { SliceName } from '../functional/variable-place.ts';
 import { atPoints } from './at-points.ts';
-import { type EnergyGraph, type SliceName, sliceEnergies } from './energies.ts';
+import { type EnergyGraph, sliceEnergies } from './energies.ts';
 import { derivativesAlong } from './partials.ts';
 import type { Rule, SlicePoint } from './rule.ts';
 import { derivativeWords, shown } from './words.ts';

@@ -1,6 +1,7 @@
 import { differentiate } from '../derivative/differentiate.ts';
 import { energiesAt } from '../evaluate/energies.ts';
 import { instantiate, type PrintedParameter } from '../functional/instance.ts';
+import { type SliceName, sliceNames, variableSlice } from '../functional/variable-place.ts';
 import { cbrt, constant, decimal, div, mul, pi, sub } from '../graph/build.ts';
 import { Graph, type NodeId } from '../graph/graph.ts';
 import { variablesOf } from '../graph/traverse.ts';
@@ -8,7 +9,6 @@ import { evaluateDecimal } from '../kernel/decimal.ts';
 import { compileKernel } from '../kernel/float64.ts';
 import { type Decimal, decimalContext } from '../number/decimal.ts';
 import { rational } from '../number/rational.ts';
-import { type SliceName, sliceNames, slicePlaceIn } from './energies.ts';
 import type { RuleQuestion, SlicePoint } from './rule.ts';
 
 const digits = 40;
@@ -48,7 +48,7 @@ export function roundedFunctional({ functional, parameters }: RuleQuestion): Rou
   const noted = new Map<string, PrintedParameter>();
   const changed = new Map([...parameters].map(([name, value]) => [name, constant(graph, value)]));
   const instance = instantiate(graph, functional, { parameters: changed, printed: noted });
-  const { xc, x, c } = energiesAt(instance, slicePlaceIn(graph), 'enhancement');
+  const { xc, x, c } = energiesAt(instance, variableSlice(graph), 'enhancement');
   const whole = (xc ?? x ?? c) as NodeId;
   const margins = marginsOf(graph, { xc, x, c });
   const outputs = [whole, ...margins.map(({ node }) => node)];

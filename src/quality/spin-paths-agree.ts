@@ -1,4 +1,5 @@
 import { type DensityInputs, densityPlace, slicePlace } from '../functional/place.ts';
+import { densityNames, type SliceName } from '../functional/variable-place.ts';
 import { add, constant, div, mul, pi, power, variable } from '../graph/build.ts';
 import { Graph, type NodeId } from '../graph/graph.ts';
 import { variablesOf } from '../graph/traverse.ts';
@@ -8,7 +9,7 @@ import { decimalContext } from '../number/decimal.ts';
 import { rational } from '../number/rational.ts';
 import type { Axis } from '../search/axis.ts';
 import { samplePoints } from '../search/sample.ts';
-import { densityNames, energiesOf, type SliceName } from './energies.ts';
+import { energiesOf } from './energies.ts';
 import type { Rule, SlicePoint } from './rule.ts';
 import { pointWords, shown } from './words.ts';
 

@@ -1,9 +1,9 @@
+import type { SliceName } from '../functional/variable-place.ts';
 import { sub } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { reachable, variablesOf } from '../graph/traverse.ts';
 import { atPoints } from './at-points.ts';
 import { insidePlace } from './edges.ts';
-import type { SliceName } from './energies.ts';
 
 /** A place where a formula goes over from one branch to another, met along one axis. */
 export interface Join {

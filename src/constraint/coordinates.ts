@@ -1,16 +1,15 @@
 import type { Space } from '../definition/constraint.ts';
-import { type DensityInputs, densityPlace, type Place, slicePlace } from '../functional/place.ts';
+import { type DensityInputs, densityPlace, type Place } from '../functional/place.ts';
+import { sliceNames } from '../functional/variable-place.ts';
 import { add, cbrt, constant, div, mul, pi, power, sub, variable } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { rational } from '../number/rational.ts';
 
-/** Coordinates of the uniform-polarisation slice; q only for Laplacian functionals. */
-export const sliceCoordinates = ['rs', 'zeta', 's', 'alpha', 'q'] as const;
 /** Coordinates of the general spin space; `cosine` is that of the angle between ∇n↑ and ∇n↓. */
 export const spinCoordinates = ['rs', 'zeta', 's_up', 's_dn', 'cosine', 'alpha_up', 'alpha_dn'] as const;
 
 export function coordinatesOf(space: Space): readonly string[] {
-  return space === 'slice' ? sliceCoordinates : spinCoordinates;
+  return space === 'slice' ? sliceNames : spinCoordinates;
 }
 
 /** The coordinate that takes a coordinate's value when the spin labels are swapped, with its sign. */
@@ -21,18 +20,6 @@ export const swappedCoordinates: Readonly<Record<string, { readonly from: string
   alpha_up: { from: 'alpha_dn', sign: 1 },
   alpha_dn: { from: 'alpha_up', sign: 1 },
 };
-
-/** The place whose coordinates are the variables of the slice. */
-export function slicePlaceOf(graph: Graph): Place {
-  const [rs, zeta, s, alpha, q] = sliceCoordinates.map((name) => variable(graph, name)) as [
-    NodeId,
-    NodeId,
-    NodeId,
-    NodeId,
-    NodeId,
-  ];
-  return slicePlace(graph, { rs, zeta, s, alpha, q });
-}
 
 /**
  * The densities of the general spin space, from its coordinates: n_σ = n(1 ± ζ)/2,

@@ -6,13 +6,14 @@ import type { Functional } from '../functional/functional.ts';
 import { exactExchangeShares, instantiate, isPartName, type PrintedParameter } from '../functional/instance.ts';
 import { densityPlace, type Place, slicePlace } from '../functional/place.ts';
 import { quantityOf } from '../functional/quantities.ts';
+import { variableSlice } from '../functional/variable-place.ts';
 import { add, choice, constant, div, mul, neg, power, sub, unary, variable } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { substitute, variablesOf } from '../graph/traverse.ts';
 import { type Rational, rational } from '../number/rational.ts';
 import { type Call, nameOf, separationName } from './calls.ts';
 import { type Condition, type EnergyName, energyNames } from './condition.ts';
-import { slicePlaceOf, spinInputs, spinPlaceOf, swappedCoordinates } from './coordinates.ts';
+import { spinInputs, spinPlaceOf, swappedCoordinates } from './coordinates.ts';
 import { coefficientOf, type Leaves, leafOf } from './leaves.ts';
 import { type LimitSequence, limitAtLowDensity } from './limit.ts';
 
@@ -88,7 +89,7 @@ function separationParameter(graph: Graph, { exactExchange }: Functional): [stri
 
 function requirementScope(graph: Graph, condition: Condition, instance: Instance, options: MarginOptions): Scope {
   const { definition } = condition;
-  const place = definition.space === 'slice' ? slicePlaceOf(graph) : spinPlaceOf(graph);
+  const place = definition.space === 'slice' ? variableSlice(graph) : spinPlaceOf(graph);
   const imports = new Map<string, Instance>();
   const imported = (alias: string): Instance => {
     const known = imports.get(alias) ?? instantiate(graph, condition.imports.get(alias) as Functional);

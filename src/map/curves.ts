@@ -1,6 +1,5 @@
 import { notApplicable } from '../constraint/applicable.ts';
 import type { Condition } from '../constraint/condition.ts';
-import { slicePlaceOf } from '../constraint/coordinates.ts';
 import { type Domain, type DomainCoordinate, domainCoordinates } from '../constraint/domain.ts';
 import { limitInFloat64 } from '../constraint/limit.ts';
 import { buildMargin } from '../constraint/margin.ts';
@@ -11,6 +10,7 @@ import type { Expression } from '../expression/expression.ts';
 import type { Bound, Curve, CurvePanel, CurveSet } from '../finding/curves.ts';
 import type { PictureAxis } from '../finding/margin-map.ts';
 import { instantiate } from '../functional/instance.ts';
+import { variableSlice } from '../functional/variable-place.ts';
 import { constant } from '../graph/build.ts';
 import { Graph, type NodeId } from '../graph/graph.ts';
 import { variablesOf } from '../graph/traverse.ts';
@@ -126,7 +126,7 @@ function nodeFor(
   const instance = instantiate(graph, functional, { parameters: changed });
   const part = /(?:F|eps_)(xc|x|c)/.exec(quantity)?.[1] as 'x' | 'c' | 'xc';
   // A derivative depends on what the factor depends on.
-  return energiesAt(instance, slicePlaceOf(graph), quantity.startsWith('eps') ? 'perParticle' : 'enhancement')[part];
+  return energiesAt(instance, variableSlice(graph), quantity.startsWith('eps') ? 'perParticle' : 'enhancement')[part];
 }
 
 /** Levels that conditions set to the quantity alone, where the slice is one that the condition speaks of. */

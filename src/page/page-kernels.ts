@@ -1,6 +1,5 @@
 import { notApplicable } from '../constraint/applicable.ts';
 import type { Condition } from '../constraint/condition.ts';
-import { slicePlaceOf } from '../constraint/coordinates.ts';
 import { axesOf, type Domain } from '../constraint/domain.ts';
 import { limitInFloat64 } from '../constraint/limit.ts';
 import { buildMargin, type Margin } from '../constraint/margin.ts';
@@ -8,6 +7,7 @@ import { energiesAt } from '../evaluate/energies.ts';
 import type { Finding, FunctionalFindings } from '../finding/finding.ts';
 import type { Functional } from '../functional/functional.ts';
 import { instantiate } from '../functional/instance.ts';
+import { variableSlice } from '../functional/variable-place.ts';
 import { constant } from '../graph/build.ts';
 import { Graph, type NodeId } from '../graph/graph.ts';
 import { variablesOf } from '../graph/traverse.ts';
@@ -135,7 +135,7 @@ function energyNodes(functional: Functional, parameters: ReadonlyMap<string, Rat
   const instance = instantiate(graph, functional, {
     parameters: new Map([...parameters].map(([name, value]) => [name, constant(graph, value)])),
   });
-  const place = slicePlaceOf(graph);
+  const place = variableSlice(graph);
   const perParticle = energiesAt(instance, place, 'perParticle');
   const enhancement = energiesAt(instance, place, 'enhancement');
   const all: readonly (readonly [string, NodeId | undefined])[] = [

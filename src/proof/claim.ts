@@ -4,16 +4,20 @@ import { limitInFloat64 } from '../constraint/limit.ts';
 import { buildMargin } from '../constraint/margin.ts';
 import type { Functional } from '../functional/functional.ts';
 import { Graph, type NodeId } from '../graph/graph.ts';
+import { makeSigns, type Signs } from '../graph/sign.ts';
 import { reachable, variablesOf } from '../graph/traverse.ts';
 import { cbrtInterval } from '../interval/root.ts';
+import { evaluateIntervals, intervalsOver } from '../kernel/interval-point.ts';
 import type { Rational } from '../number/rational.ts';
 import { toNumber } from '../number/rational.ts';
 import type { BranchAxis } from '../search/branch.ts';
-import { decidableForm, polarisationRoot, type RewriteName, withPolarisationRoot } from './forms.ts';
+import { decidableForm, polarisationRoot, type RewriteName, type RewrittenForm, rewriteMargin } from './forms.ts';
 
 /** What is to be proved: that a margin is at least −tolerance wherever in a box it has a value. */
 export interface Claim {
   readonly graph: Graph;
+  /** What is positive at every inner point of the domain: a point of its edge counts where the formula has a value. */
+  readonly signs: Signs;
   /** Nodes that all are the margin, in different forms. */
   readonly forms: readonly NodeId[];
   readonly variables: readonly string[];
@@ -22,6 +26,9 @@ export interface Claim {
   /** The rewrites that made the forms from the sheets. */
   readonly rewrites: readonly RewriteName[];
 }
+
+/** Coordinates that are positive inside every domain. */
+const neverNegative = ['rs', 's', 'alpha', 's_up', 's_dn', 'alpha_up', 'alpha_dn', polarisationRoot];
 
 export interface ClaimSettings {
   readonly domain: Domain;
@@ -53,12 +60,22 @@ export function claimOf(
       ...(rewrite === undefined ? {} : { rewrite }),
     }).node;
   const plain = build();
-  const energyRewrites = allowed.filter((name) => name !== 'polarisation-root');
-  const rewritten = energyRewrites.length === 0 ? plain : build((target, energy) => decidableForm(target, energy));
-  const usesRoot = allowed.includes('polarisation-root') && condition.definition.space === 'slice';
-  const margins = rewritten === plain ? [plain] : [rewritten];
-  const hasZeta = variablesOf(graph, margins).has('zeta') && usesRoot;
-  const forms = hasZeta ? withPolarisationRoot(graph, margins) : margins;
+  if (!haveValues(graph, plain)) return 'a constant in the formula has no value';
+  const { space } = condition.definition;
+  const form = (margin: NodeId): RewrittenForm =>
+    rewriteMargin(graph, margin, space === 'slice' ? allowed : allowed.filter((name) => name !== 'polarisation-root'), {
+      inside: signsOver(graph, settings.domain, condition, neverNegative),
+      closed: signsOver(graph, settings.domain, condition, ['rs']),
+    });
+  const ofEnergy = allowed.filter((name) => name === 'merge-logarithms' || name === 'separate-blends');
+  // The two sides of an identity are the same as they stand, and may not be with only one rewritten.
+  const direct = ofEnergy.length === 0 || space === 'spin' ? form(plain) : undefined;
+  const isIdentity = direct !== undefined && variablesOf(graph, [direct.node]).size === 0;
+  const rewritten = isIdentity || ofEnergy.length === 0 ? plain : build(decidableForm);
+  const made = rewritten === plain && direct !== undefined ? direct : form(rewritten);
+  const forms = [made.node];
+  const hasZeta = made.rewrites.includes('polarisation-root');
+  const rewrites = [...(rewritten === plain ? [] : ofEnergy), ...made.rewrites];
   const used = variablesOf(graph, forms);
   const axes = axesOf(settings.domain, condition.definition.space).flatMap((axis) => {
     const isRoot = axis.name === 'zeta' && hasZeta;
@@ -70,12 +87,33 @@ export function claimOf(
   });
   return {
     graph,
+    signs: signsOver(graph, settings.domain, condition, neverNegative),
     forms,
     variables: axes.map(({ name }) => name),
     axes: axes.map(({ axis }) => axis),
     tolerance: condition.definition.tolerance,
-    rewrites: [...(rewritten === plain ? [] : energyRewrites), ...(hasZeta ? (['polarisation-root'] as const) : [])],
+    rewrites,
   };
+}
+
+/** Whether every constant below a node has a value: a rewrite may lose one. */
+function haveValues(graph: Graph, output: NodeId): boolean {
+  const constants = reachable(graph, [output]).filter((id) => variablesOf(graph, [id]).size === 0);
+  return evaluateIntervals(graph, constants, new Map()).every(({ defined }) => defined);
+}
+
+/** Signs on the domain, w = (1 − ζ)^(1/3) included, where the named coordinates are positive. */
+function signsOver(graph: Graph, domain: Domain, condition: Condition, positive: readonly string[]): Signs {
+  const box = new Map(
+    axesOf(domain, condition.definition.space).map(({ name, lower, upper }) => [
+      name as string,
+      [lower, upper] as const,
+    ]),
+  );
+  const [lower, upper] = box.get('zeta') ?? [0, 0];
+  box.set(polarisationRoot, rootBounds(lower, upper));
+  const bounds = intervalsOver(graph, box);
+  return makeSigns(graph, new Set(positive), (id) => bounds(id).lower);
 }
 
 /** w = (1 − ζ)^(1/3), rounded outward. */

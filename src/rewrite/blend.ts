@@ -1,4 +1,4 @@
-import { add, choice, constant, mul, neg, sub, unary } from '../graph/build.ts';
+import { add, constant, mul, sub } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { type Rational, rational } from '../number/rational.ts';
 import { mapGraph } from './simplify.ts';
@@ -52,7 +52,7 @@ function separated(graph: Graph, sum: Sum): NodeId | undefined {
         terms.delete(term);
         const remainder = { constant: sum.constant, terms };
         const others = separated(graph, remainder) ?? sumNode(graph, remainder);
-        const blend = add(graph, mul(graph, a, oneMinus(graph, product)), mul(graph, product, b));
+        const blend = add(graph, mul(graph, a, sub(graph, constant(graph, 1), product)), mul(graph, product, b));
         return add(graph, others, blend);
       }
     }
@@ -68,15 +68,4 @@ function factorsOf(graph: Graph, id: NodeId): NodeId[] {
   const node = graph.node(id);
   if (node.kind !== 'binary' || node.op !== 'mul') return [id];
   return node.args.flatMap((argument) => factorsOf(graph, argument));
-}
-
-/** 1 − f with the difference taken inside a choice; 1 − eˣ = −(eˣ − 1). */
-function oneMinus(graph: Graph, id: NodeId): NodeId {
-  const node = graph.node(id);
-  if (node.kind === 'choice') {
-    const [a, b, whenTrue, whenFalse] = node.args;
-    return choice(graph, node.op, a, b, oneMinus(graph, whenTrue), oneMinus(graph, whenFalse));
-  }
-  if (node.kind === 'unary' && node.op === 'exp') return neg(graph, unary(graph, 'expm1', node.args[0]));
-  return sub(graph, constant(graph, 1), id);
 }

@@ -1,8 +1,10 @@
 import { constant, div, mul, sub, unary } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { reachable } from '../graph/traverse.ts';
+import { keepsDomain } from './domain.ts';
+import { isSum } from './fraction.ts';
 import { polynomialDifference, polynomialOf } from './polynomial.ts';
-import { type Product, productNode, productOf, quotient, raised, sameProduct, unitProduct } from './product.ts';
+import { type Product, productNode, productOf, quotient, sameProduct, unitProduct } from './product.ts';
 import { mapGraph } from './simplify.ts';
 
 /**
@@ -86,33 +88,4 @@ function withFactor(graph: Graph, q: Product, atom: NodeId, sums: readonly NodeI
   const left = quotient(q, productOf(graph, atom));
   if ([...left.factors.keys()].some((id) => !sums.includes(id))) return undefined;
   return { coefficient: left.coefficient, factors: new Map([...left.factors, [atom, 1]]) };
-}
-
-function isSum(graph: Graph, id: NodeId): boolean {
-  const node = graph.node(id);
-  return node.kind === 'binary' && (node.op === 'add' || node.op === 'sub');
-}
-
-/** Whether every node that may lack a value below `old` is also below `form`. */
-function keepsDomain(graph: Graph, old: NodeId, form: NodeId): boolean {
-  const kept = new Set(reachable(graph, [form]).map((id) => partialOperand(graph, id)));
-  return reachable(graph, [old]).every((id) => {
-    const operand = partialOperand(graph, id);
-    return operand === undefined || kept.has(operand);
-  });
-}
-
-/** The operand whose value decides whether the node has one: a denominator, or the argument of a root or logarithm. */
-function partialOperand(graph: Graph, id: NodeId): string | undefined {
-  const node = graph.node(id);
-  if (node.kind === 'binary' && node.op === 'div') return denominators(graph, node.args[1]);
-  if (node.kind === 'power' && node.exponent.s < 0n) return denominators(graph, node.args[0]);
-  if (node.kind === 'power' && node.exponent.d % 2n === 0n) return `root ${node.args[0]}`;
-  if (node.kind === 'unary' && ['log', 'log1p', 'lambertW'].includes(node.op)) return `${node.op} ${node.args[0]}`;
-  return undefined;
-}
-
-/** What must not be zero for a denominator not to be. */
-function denominators(graph: Graph, id: NodeId): string {
-  return `/ ${[...raised(productOf(graph, id), 1).factors.keys()].sort((a, b) => a - b).join(' ')}`;
 }

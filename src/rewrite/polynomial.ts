@@ -1,7 +1,7 @@
 import { constant, mul, power } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { type Rational, rational } from '../number/rational.ts';
-import type { Product } from './product.ts';
+import { type Product, productOf } from './product.ts';
 import { type Sum, sumNode, sumOf } from './sum.ts';
 
 /** A polynomial in nodes; each monomial by the text of its exponents. */
@@ -62,29 +62,59 @@ export function polynomialDifference(graph: Graph, a: Product, b: Product): Node
   }));
   const difference = collect([...first.monomials.values(), ...negative]);
   if (difference.monomials.size >= first.monomials.size + second.monomials.size) return undefined;
+  return polynomialNode(graph, difference);
+}
+
+/** Some products multiplied out, sums in sums too, and added up, as a node; undefined when there are too many monomials. */
+export function polynomialSum(graph: Graph, products: readonly Product[]): NodeId | undefined {
+  const parts = products.map((product) => expanded(graph, product, true));
+  if (parts.some((part) => part === undefined)) return undefined;
+  return polynomialNode(graph, collect(parts.flatMap((part) => [...(part as Polynomial).monomials.values()])));
+}
+
+function polynomialNode(graph: Graph, { monomials }: Polynomial): NodeId {
   const terms = new Map<NodeId, Rational>();
   let rest = rational(0);
-  for (const { coefficient, powers } of difference.monomials.values()) {
+  for (const { coefficient, powers } of monomials.values()) {
     if (powers.size === 0) rest = rest.add(coefficient);
     else {
       const node = [...powers].reduce(
         (left, [id, e]) => mul(graph, left, power(graph, id, rational(e))),
         constant(graph, 1),
       );
-      terms.set(node, coefficient);
+      // Two monomials may be one node: x·y, and a term that is that product.
+      terms.set(node, (terms.get(node) ?? rational(0)).add(coefficient));
     }
   }
   return sumNode(graph, { constant: rest, terms });
 }
 
-function expanded(graph: Graph, { coefficient, factors }: Product): Polynomial | undefined {
+function single(id: NodeId, exponent: number): Polynomial {
+  return collect([{ coefficient: rational(1), powers: new Map([[id, exponent]]) }]);
+}
+
+function expanded(graph: Graph, { coefficient, factors }: Product, isDeep = false): Polynomial | undefined {
   let result = collect([{ coefficient, powers: new Map() }]);
   for (const [id, exponent] of factors) {
-    const own = polynomialOf(graph, id);
-    for (let count = 0; count < exponent; count++) {
+    const own = exponent < 0 ? single(id, exponent) : isDeep ? deepPolynomial(graph, id) : polynomialOf(graph, id);
+    if (own === undefined) return undefined;
+    // A reciprocal stays one factor.
+    for (let count = 0; count < Math.max(exponent, 1); count++) {
       result = product(result, own);
       if (result.monomials.size > mostMonomials) return undefined;
     }
   }
   return result;
+}
+
+function deepPolynomial(graph: Graph, id: NodeId): Polynomial | undefined {
+  const sum = sumOf(graph, id);
+  if (sum.terms.size === 1 && sum.terms.has(id)) return single(id, 1);
+  const parts = [...sum.terms].map(([term, coefficient]) => {
+    const own = productOf(graph, term);
+    return expanded(graph, { ...own, coefficient: own.coefficient.mul(coefficient) }, true);
+  });
+  if (parts.some((part) => part === undefined)) return undefined;
+  const rest = { coefficient: sum.constant, powers: new Map() };
+  return collect([...parts.flatMap((part) => [...(part as Polynomial).monomials.values()]), rest]);
 }

@@ -12,7 +12,8 @@ const unit: Product = { coefficient: rational(1), factors: new Map() };
 
 /**
  * The node as a product. Products, quotients, signs and whole powers are opened; a − b and b − a are one factor with
- * two signs. Where the node has a value, so have all its factors, and the product is that value.
+ * two signs; a/(a + b) stays one factor. Where the node has a value, so have all its factors, and the product is that
+ * value.
  */
 export function productOf(graph: Graph, id: NodeId): Product {
   const node = graph.node(id);
@@ -28,6 +29,7 @@ export function productOf(graph: Graph, id: NodeId): Product {
     case 'binary': {
       const [a, b] = node.args;
       if (node.op === 'mul') return times(productOf(graph, a), productOf(graph, b));
+      if (node.op === 'div' && isShare(graph, node.args)) return factor(id);
       if (node.op === 'div') return times(productOf(graph, a), raised(productOf(graph, b), -1));
       // The sign of a difference is that of the lower id first.
       if (node.op === 'sub' && a > b) return scaled(factor(sub(graph, b, a)), rational(-1));
@@ -36,6 +38,12 @@ export function productOf(graph: Graph, id: NodeId): Product {
     default:
       return factor(id);
   }
+}
+
+/** Whether a quotient is a/(a + b). */
+export function isShare(graph: Graph, [top, bottom]: readonly [NodeId, NodeId]): boolean {
+  const node = graph.node(bottom);
+  return node.kind === 'binary' && node.op === 'add' && node.args.includes(top);
 }
 
 function factor(id: NodeId): Product {
@@ -77,7 +85,8 @@ export function sameProduct(a: Product, b: Product): boolean {
 export function productNode(graph: Graph, { coefficient, factors }: Product): NodeId {
   let top = constant(graph, 1);
   let bottom = constant(graph, 1);
-  for (const [id, exponent] of factors) {
+  // In the order of ids, so that equal products are one node.
+  for (const [id, exponent] of [...factors].sort(([a], [b]) => a - b)) {
     const raisedFactor = power(graph, id, rational(Math.abs(exponent)));
     if (exponent > 0) top = mul(graph, top, raisedFactor);
     else bottom = mul(graph, bottom, raisedFactor);

@@ -34,9 +34,19 @@ function isNonNegative(graph: Graph, id: NodeId, variables: ReadonlySet<string>)
 
 /** Rebuilds the outputs, children first; each rebuilt node is replaced by what `change` answers for it. */
 export function mapGraph(graph: Graph, outputs: readonly NodeId[], change: (id: NodeId) => NodeId): NodeId[] {
+  const images = imagesOf(graph, outputs, change);
+  return outputs.map((id) => images.get(id) as NodeId);
+}
+
+/** What mapGraph makes of every node below the outputs. */
+export function imagesOf(
+  graph: Graph,
+  outputs: readonly NodeId[],
+  change: (id: NodeId) => NodeId,
+): ReadonlyMap<NodeId, NodeId> {
   const images = new Map<NodeId, NodeId>();
   for (const id of reachable(graph, outputs)) {
     images.set(id, change(rebuild(graph, graph.node(id), id, (argument) => images.get(argument) as NodeId)));
   }
-  return outputs.map((id) => images.get(id) as NodeId);
+  return images;
 }

@@ -1,3 +1,4 @@
+import { asinhBends, atanBends, erfBends, expBends, expm1Bends, log1pBends, logBends, tanhBends } from './bends.ts';
 import { cosh, exp, expm1, sinh, tanh } from './exponential.ts';
 import { asinh, log, log1p } from './logarithm.ts';
 import { reciprocal } from './powers.ts';
@@ -43,10 +44,26 @@ function onePlusSquare(x: number, out: Pair): void {
 
 /** Every unary operator but neg and abs. */
 export const smoothFunctions = {
-  exp: { at: exp, least: every, open: false, over: 1, slope: itself, curvature: convex },
-  expm1: { at: expm1, least: every, open: false, over: 1, slope: (x, _value, out) => exp(x, out), curvature: convex },
-  log: { at: log, least: 0, open: true, over: 1, slope: inverse(exact((x) => x)), curvature: concave },
-  log1p: { at: log1p, least: -1, open: true, over: 1, slope: inverse(exact((x) => 1 + x)), curvature: concave },
+  exp: { at: exp, least: every, open: false, over: 1, slope: itself, curvature: convex, bends: expBends },
+  expm1: {
+    at: expm1,
+    least: every,
+    open: false,
+    over: 1,
+    slope: (x, _value, out) => exp(x, out),
+    curvature: convex,
+    bends: expm1Bends,
+  },
+  log: { at: log, least: 0, open: true, over: 1, slope: inverse(exact((x) => x)), curvature: concave, bends: logBends },
+  log1p: {
+    at: log1p,
+    least: -1,
+    open: true,
+    over: 1,
+    slope: inverse(exact((x) => 1 + x)),
+    curvature: concave,
+    bends: log1pBends,
+  },
   sin: { at: sin, least: every, open: false, over: wave(sin, Math.PI / 2), curvature: () => 0 },
   cos: { at: cos, least: every, open: false, over: wave(cos, 0), curvature: () => 0 },
   sinh: { at: sinh, least: every, open: false, over: 1, slope: (x, _value, out) => cosh(x, out), curvature: bendsAway },
@@ -70,6 +87,7 @@ export const smoothFunctions = {
       reciprocal(out);
     },
     curvature: bendsTowardZero,
+    bends: tanhBends,
   },
   asinh: {
     at: asinh,
@@ -86,8 +104,17 @@ export const smoothFunctions = {
       reciprocal(out);
     },
     curvature: bendsTowardZero,
+    bends: asinhBends,
   },
-  atan: { at: atan, least: every, open: false, over: 1, slope: inverse(onePlusSquare), curvature: bendsTowardZero },
+  atan: {
+    at: atan,
+    least: every,
+    open: false,
+    over: 1,
+    slope: inverse(onePlusSquare),
+    curvature: bendsTowardZero,
+    bends: atanBends,
+  },
   erf: {
     at: erf,
     least: every,
@@ -103,6 +130,7 @@ export const smoothFunctions = {
       out[1] = productUp(out[1] as number, twoOverRootPi[1]);
     },
     curvature: bendsTowardZero,
+    bends: erfBends,
   },
   lambertW: {
     at: lambertW,

@@ -1,4 +1,5 @@
 import { type Rational, toNumber } from '../number/rational.ts';
+import { powerBends } from './bends.ts';
 import { exp } from './exponential.ts';
 import { log } from './logarithm.ts';
 import { powerByRoots } from './root.ts';
@@ -42,6 +43,11 @@ export function powerFunction(exponent: Rational): Smooth {
   };
   /** p/q·x^(p/q)/x: the middle of the enclosure with four roundings, and what its width adds. */
   const slope = (x: number, result: Pair, out: Pair): void => {
+    if (x === 0 && value > 1) {
+      out[0] = 0;
+      out[1] = 0;
+      return;
+    }
     const [lower, upper] = [result[0] as number, result[1] as number];
     const middle = (value * (lower + (upper - lower) * 0.5)) / x;
     const margin = Math.abs(middle) * 2 ** -49 + Math.abs(value * (upper - lower)) / Math.abs(x);
@@ -82,6 +88,7 @@ export function powerFunction(exponent: Rational): Smooth {
       if (upper <= 0) return isEven ? bend : bend === 1 ? -1 : 1;
       return isEven && !isNegative && exponent.d === 1n ? 1 : 0;
     },
+    bends: powerBends(exponent),
   };
 }
 

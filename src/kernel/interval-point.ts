@@ -28,17 +28,26 @@ export function evaluateIntervals(
   outputs: readonly NodeId[],
   box: ReadonlyMap<string, readonly [number, number]>,
 ): EnclosedValue[] {
+  return outputs.map(intervalsOver(graph, box));
+}
+
+/** The same for one node after the other; what has been enclosed is kept. */
+export function intervalsOver(
+  graph: Graph,
+  box: ReadonlyMap<string, readonly [number, number]>,
+): (id: NodeId) => EnclosedValue {
   const values = new Map<NodeId, Pair>();
   const undefinedNodes = new Set<NodeId>();
-  for (const id of reachable(graph, outputs)) {
-    const { value, defined } = evaluateNode(graph.node(id), values, undefinedNodes, box);
-    values.set(id, value);
-    if (!defined) undefinedNodes.add(id);
-  }
-  return outputs.map((id) => {
-    const [lower, upper] = values.get(id) as Pair;
-    return { lower: lower as number, upper: upper as number, defined: !undefinedNodes.has(id) };
-  });
+  return (output) => {
+    for (const id of values.has(output) ? [] : reachable(graph, [output])) {
+      if (values.has(id)) continue;
+      const { value, defined } = evaluateNode(graph.node(id), values, undefinedNodes, box);
+      values.set(id, value);
+      if (!defined) undefinedNodes.add(id);
+    }
+    const [lower, upper] = values.get(output) as Pair;
+    return { lower: lower as number, upper: upper as number, defined: !undefinedNodes.has(output) };
+  };
 }
 
 interface Evaluated {

@@ -1,7 +1,9 @@
+import { countText } from '../report/number-text.ts';
 import type { Terminal } from './terminal.ts';
 
 export interface ProgressLine {
-  readonly report: (subject: string, points: number) => void;
+  /** `note` is shown behind the count. */
+  readonly report: (subject: string, points: number, note?: string) => void;
   /** Takes the line away. */
   readonly end: () => void;
 }
@@ -21,13 +23,16 @@ export function progressLine(
   let points = 0;
   let shown = false;
   return {
-    report(subject, more) {
+    report(subject, more, note) {
       points += more;
       if (!terminal.watched || clock() - written < interval) return;
       written = clock();
       shown = true;
       const seconds = Math.floor((written - start) / 1000);
-      terminal.writeErr(`\r\u001b[K${subject}: ${(points / 1e6).toFixed(1)} million ${things} looked at, ${seconds} s`);
+      const number = points < 1e5 ? countText(points) : `${(points / 1e6).toFixed(1)} million`;
+      const count = `${number} ${things} looked at`;
+      const noted = note === undefined ? '' : `, ${note}`;
+      terminal.writeErr(`\r\u001b[K${subject}: ${count}${noted}, ${seconds} s`);
     },
     end() {
       if (shown) terminal.writeErr('\r\u001b[K');

@@ -18,3 +18,25 @@ export function endOnSignals(onEnd: () => void): () => void {
     for (const { signal, listener } of listeners) process.off(signal, listener);
   };
 }
+
+/**
+ * Tells of the first Ctrl-C or SIGTERM, with the status to end with once what is known is told; a second one ends the
+ * program at once. Answers how to stop listening.
+ */
+export function onFirstSignal(tell: (status: number) => void): () => void {
+  let come = false;
+  const signals = ['SIGINT', 'SIGTERM'] as const;
+  const listeners = signals.map((signal) => {
+    const status = 128 + constants.signals[signal];
+    const listener = () => {
+      if (come) process.exit(status);
+      come = true;
+      tell(status);
+    };
+    process.on(signal, listener);
+    return () => process.off(signal, listener);
+  });
+  return () => {
+    for (const release of listeners) release();
+  };
+}

@@ -72,9 +72,9 @@ export const proofSchema = z.strictObject({
   boxes: z.int().describe('boxes looked at'),
   deepest: z.int().describe('halvings that led to the smallest box'),
   stop: z
-    .enum(['decided', 'budget', 'resolution', 'not-provable'])
+    .enum(['decided', 'budget', 'resolution', 'interrupted', 'not-provable'])
     .describe(
-      'why it ended: all decided, the budget of boxes spent, boxes too small to divide, or no claim about boxes',
+      'why it ended: all decided, the budget of boxes spent, boxes too small to divide, interrupted by the user, or no claim about boxes',
     ),
   provedShare: z.number().describe('share of the domain on which it is proved to hold'),
   violatedShare: z.number().describe('share on which it is proved to be violated'),

@@ -1,10 +1,10 @@
 import { createHash } from 'node:crypto';
 import type { Condition } from '../constraint/condition.ts';
 import { customDomain, type Domain, type DomainCoordinate, domainCoordinates } from '../constraint/domain.ts';
-import type { Certificate } from '../finding/certificate.ts';
+import type { Certificate, ClaimFields } from '../finding/certificate.ts';
 import type { Functional } from '../functional/functional.ts';
 import { type Rational, rationalText } from '../number/rational.ts';
-import type { BranchResult } from '../search/branch.ts';
+import type { SharedResult } from '../search/share-blocks.ts';
 import type { Claim, ClaimSettings } from './claim.ts';
 
 /** The hash of a functional: of its sheet and of all that it uses. */
@@ -18,24 +18,19 @@ export function constraintHash({ definition, imports }: Condition): string {
   return hashOf(['constraint', definition.id, definition.text, ...used]);
 }
 
-function hashOf(parts: readonly string[]): string {
+export function hashOf(parts: readonly string[]): string {
   return createHash('sha256').update(JSON.stringify(parts)).digest('hex');
 }
 
-/** The certificate of a decided proof. */
-export function certificateOf(
+/** What is claimed, in the words of certificates. */
+export function claimFields(
   condition: Condition,
   functional: Functional,
   settings: ClaimSettings,
   claim: Claim,
-  result: BranchResult,
-  engineVersion: string,
-): Certificate {
+): ClaimFields {
   const end = (value: number) => (Number.isFinite(value) ? value : null);
-  const body = {
-    format: 'rungcheck certificate' as const,
-    formatVersion: 1 as const,
-    engineVersion,
+  return {
     functional: functional.definition.id,
     functionalHash: functionalHash(functional),
     constraint: condition.definition.id,
@@ -56,6 +51,23 @@ export function certificateOf(
       scale,
       divisions: [...divisions],
     })),
+  };
+}
+
+/** The certificate of a decided proof. */
+export function certificateOf(
+  condition: Condition,
+  functional: Functional,
+  settings: ClaimSettings,
+  claim: Claim,
+  result: SharedResult,
+  engineVersion: string,
+): Certificate {
+  const body = {
+    format: 'rungcheck certificate' as const,
+    formatVersion: 1 as const,
+    engineVersion,
+    ...claimFields(condition, functional, settings, claim),
     boxes: result.boxes,
     deepest: result.deepest,
     tree: result.tree,
@@ -63,9 +75,9 @@ export function certificateOf(
   return { ...body, digest: digestOf(body) };
 }
 
-/** The digest of a certificate's other fields, in their order. */
-export function digestOf(certificate: Omit<Certificate, 'digest'>): string {
-  const { digest: _, ...body } = certificate as Certificate;
+/** The digest of the other fields of a certificate or state, in their order. */
+export function digestOf(file: object): string {
+  const { digest: _, ...body } = file as { readonly digest?: string };
   return createHash('sha256').update(JSON.stringify(body)).digest('hex');
 }
 

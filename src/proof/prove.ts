@@ -6,44 +6,62 @@ import type { Finding, ProofRecord, Witness } from '../finding/finding.ts';
 import type { Functional } from '../functional/functional.ts';
 import { Graph } from '../graph/graph.ts';
 import { evaluateIntervals } from '../kernel/interval-point.ts';
-import type { BranchResult } from '../search/branch.ts';
+import type { BranchOptions } from '../search/box-search.ts';
+import type { SharedResult } from '../search/share-blocks.ts';
 import { type Claim, type ClaimSettings, claimOf } from './claim.ts';
-import { decideClaim, type ProofOptions } from './decide-claim.ts';
+import { decideClaim } from './decide-claim.ts';
 import { polarisationRoot, rewriteNames } from './forms.ts';
+import { sameMargin } from './same-margin.ts';
 
 export interface Proof {
   readonly claim: Claim | undefined;
-  readonly result: BranchResult | undefined;
+  readonly result: SharedResult | undefined;
   readonly record: ProofRecord;
 }
 
-/** Tries to prove a condition for a functional over the domain of the settings. */
+/** What is claimed of a functional by a condition over the domain of the settings, or why boxes cannot prove it. */
+export function provableClaim(condition: Condition, functional: Functional, settings: ClaimSettings): Claim | string {
+  const claim = claimOf(condition, functional, settings, rewriteNames);
+  if (typeof claim === 'string' || claim.rewrites.length === 0) return claim;
+  const plain = claimOf(condition, functional, settings, []);
+  if (typeof plain === 'string') return plain;
+  if (sameMargin(plain, claim)) return claim;
+  throw new Error(`the rewrites ${claim.rewrites.join(', ')} change the margin of ${condition.definition.id}`);
+}
+
+/** Tries to prove a condition for a functional over the domain of the settings, in this thread. */
 export function proveCondition(
   condition: Condition,
   functional: Functional,
   settings: ClaimSettings,
-  options: ProofOptions,
+  options: BranchOptions,
 ): Proof {
-  const claim = claimOf(condition, functional, settings, rewriteNames);
-  if (typeof claim === 'string') {
-    const nothing = { boxes: 0, deepest: 0, provedShare: 0, violatedShare: 0, undecidedShare: 1 };
-    const words = { undecidedWords: '', violatedWords: '', certifiedAtWitness: false, rewrites: [] };
-    const reason = `not provable by boxes: ${claim}`;
-    return {
-      claim: undefined,
-      result: undefined,
-      record: { ...nothing, ...words, stop: 'not-provable', reason },
-    };
-  }
+  const claim = provableClaim(condition, functional, settings);
+  if (typeof claim === 'string') return { claim: undefined, result: undefined, record: recordOfNone(claim) };
   const result = decideClaim(claim, options);
   return { claim, result, record: recordOf(claim, result) };
 }
 
-function recordOf(claim: Claim, result: BranchResult): ProofRecord {
+/** The record of a condition that boxes cannot prove. */
+export function recordOfNone(reason: string): ProofRecord {
+  return {
+    ...{ boxes: 0, deepest: 0, provedShare: 0, violatedShare: 0, undecidedShare: 1 },
+    ...{ undecidedWords: '', violatedWords: '', certifiedAtWitness: false, rewrites: [] },
+    stop: 'not-provable',
+    reason: `not provable by boxes: ${reason}`,
+  };
+}
+
+export function recordOf(claim: Claim, result: SharedResult): ProofRecord {
   const { boxes, deepest, stop, proved, violated, undecided } = result;
   const isProved = stop === 'decided' && violated === 0;
   const looked = `${boxes.toLocaleString('en')} ${boxes === 1 ? 'box' : 'boxes'}`;
-  const ends = { budget: 'the budget of boxes ended', resolution: 'boxes became too small to divide', decided: '' };
+  const ends = {
+    budget: 'the budget of boxes ended',
+    resolution: 'boxes became too small to divide',
+    interrupted: 'the search was interrupted',
+    decided: '',
+  };
   const reason = isProved
     ? `proved by interval arithmetic on ${looked}, the smallest after ${deepest} halvings, wherever the formula has a value`
     : violated > 0
@@ -69,7 +87,7 @@ function percent(share: number): string {
 }
 
 /** The smallest box around some boxes, in coordinates that a reader knows. */
-function hullWords({ variables, axes }: Claim, hull: BranchResult['undecidedHull']): string {
+function hullWords({ variables, axes }: Claim, hull: SharedResult['undecidedHull']): string {
   return regionWords(
     variables.map((name, index) => {
       const axis = axes[index] as Claim['axes'][number];
@@ -93,7 +111,7 @@ export function withProof(
   condition: Condition,
   functional: Functional,
   settings: ClaimSettings,
-  options: ProofOptions,
+  options: BranchOptions,
 ): Finding {
   if (finding.verdict === 'not-applicable') return finding;
   const { record } = proveCondition(condition, functional, settings, options);

@@ -13,6 +13,12 @@ export interface ProofReport {
 
 const labelWidth = 12;
 
+const endings: Readonly<Partial<Record<ProofRecord['stop'], string>>> = {
+  budget: 'The budget of boxes ended; --boxes gives it more.',
+  resolution: 'What is left are boxes too small to divide.',
+  interrupted: 'The search was interrupted; --state keeps one to go on from.',
+};
+
 /** What was asked, whether it is proved, and the shares of the domain. Ends with a line break. */
 export function proofText(
   { functional, constraint, requirement, tolerance, domain, proof }: ProofReport,
@@ -45,7 +51,7 @@ export function proofText(
           ...line('shares', shares.join('; ')),
           ...line('boxes', `${countText(boxes)}, the smallest after ${deepest} halvings`),
           ...line('rewrites', rewrites.join(', ')),
-          ...line('', stop === 'budget' ? 'The budget of boxes ended; --boxes gives it more.' : ''),
+          ...line('', endings[stop] ?? ''),
         ]),
   ].join('\n')}\n`;
 }

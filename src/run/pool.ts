@@ -1,6 +1,6 @@
-import { Worker } from 'node:worker_threads';
-import type { Answer, Order, UnitAnswer } from './answer.ts';
+import type { Order, UnitAnswer } from './answer.ts';
 import { makeQueue } from './queue.ts';
+import { openThread, type Reply, type Thread, unexpected } from './thread.ts';
 import type { Unit } from './vetter.ts';
 
 type Begin = Extract<Order, { kind: 'begin' }>;
@@ -18,32 +18,36 @@ export interface PoolListener {
 
 /** Worker threads, started when first needed and kept until closed. One that dies costs the unit it was at. */
 export function openPool(script: URL, size: number): Pool {
-  const idle: Worker[] = [];
-  const all = new Set<Worker>();
+  const idle: Thread[] = [];
+  const all = new Set<Thread>();
 
-  function start(): Worker {
-    const worker = new Worker(script);
-    all.add(worker);
-    return worker;
+  function start(): Thread {
+    const thread = openThread(script);
+    all.add(thread);
+    return thread;
   }
 
-  async function serve(begin: Begin, next: (last: Unit | undefined) => Unit | undefined, listener: PoolListener) {
-    let worker: Worker | undefined;
+  async function serve(
+    begin: Begin,
+    next: (last: Unit | undefined) => Unit | undefined,
+    { onAnswer, onProgress }: PoolListener,
+  ) {
+    let thread: Thread | undefined;
     let last: Unit | undefined;
     for (let unit = next(last); unit !== undefined; unit = next(last)) {
-      if (worker === undefined) {
-        worker = idle.pop() ?? start();
-        worker.postMessage(begin);
+      if (thread === undefined) {
+        thread = idle.pop() ?? start();
+        thread.tell(begin);
       }
-      const answer = await ask(worker, unit, listener.onProgress);
-      if (answer.kind === 'fault' && answer.died) {
-        all.delete(worker);
-        worker = undefined;
+      const reply = await thread.ask({ kind: 'unit', unit }, [], ({ subject, points }) => onProgress(subject, points));
+      if (reply.kind === 'died') {
+        all.delete(thread);
+        thread = undefined;
       }
-      listener.onAnswer(unit, answer);
+      onAnswer(unit, unitAnswer(reply));
       last = unit;
     }
-    if (worker !== undefined) idle.push(worker);
+    if (thread !== undefined) idle.push(thread);
   }
 
   return {
@@ -53,29 +57,22 @@ export function openPool(script: URL, size: number): Pool {
       await Promise.all(servers);
     },
     async close() {
-      await Promise.all([...all].map((worker) => worker.terminate()));
+      await Promise.all([...all].map((thread) => thread.close()));
       all.clear();
       idle.length = 0;
     },
   };
 }
 
-type PoolAnswer = Exclude<UnitAnswer, { kind: 'fault' }> | (Extract<UnitAnswer, { kind: 'fault' }> & { died?: true });
-
-function ask(worker: Worker, unit: Unit, onProgress: PoolListener['onProgress']): Promise<PoolAnswer> {
-  return new Promise((resolve) => {
-    const finish = (answer: PoolAnswer) => {
-      worker.off('message', onMessage).off('error', onError).off('exit', onExit);
-      resolve(answer);
-    };
-    const onMessage = (answer: Answer) => {
-      if (answer.kind === 'progress') onProgress(answer.subject, answer.points);
-      else finish(answer);
-    };
-    const onError = (error: Error) => finish({ kind: 'fault', message: `a worker died: ${error.message}`, died: true });
-    const onExit = (code: number) =>
-      finish({ kind: 'fault', message: `a worker ended with status ${code}`, died: true });
-    worker.on('message', onMessage).once('error', onError).once('exit', onExit);
-    worker.postMessage({ kind: 'unit', unit } satisfies Order);
-  });
+function unitAnswer(reply: Reply): UnitAnswer {
+  switch (reply.kind) {
+    case 'died':
+      return { kind: 'fault', message: reply.message };
+    case 'ready':
+    case 'judged':
+    case 'rechecked':
+      throw unexpected(reply);
+    default:
+      return reply;
+  }
 }

@@ -1,11 +1,16 @@
 import { closedFormsByAlgebra } from '../closed-form/algebra.ts';
+import type { Condition } from '../constraint/condition.ts';
 import { type Constraint, readConstraint } from '../constraint/constraint.ts';
 import { type Progress, vetFunctional } from '../constraint/vet.ts';
 import { failure, type Outcome, type Problem, success } from '../errors/problem.ts';
 import { suggestion } from '../errors/suggest.ts';
 import type { Finding, FunctionalFindings, SheetPlaces } from '../finding/finding.ts';
 import type { Functional } from '../functional/functional.ts';
-import { withProof } from '../proof/prove.ts';
+import { claimFields } from '../proof/certificate.ts';
+import { claimJudge } from '../proof/decide-claim.ts';
+import { provableClaim, withProof } from '../proof/prove.ts';
+import { claimIdentity } from '../proof/search-state.ts';
+import type { JudgeBlock } from '../search/box-search.ts';
 import type { ShelfFolders } from '../shelf/sheet-files.ts';
 import { openShelf } from '../shelf/shelf.ts';
 import { type RunSettings, settingsOf } from './settings.ts';
@@ -51,6 +56,27 @@ export class Vetter {
       finding: this.#withProof(findings[0] as Finding, condition.value, functional.value, onProgress),
       sheetHash: linkedHash(functional.value),
     });
+  }
+
+  /** The judge of the boxes of a unit's claim; a problem when the claim is not that of the identity any more. */
+  claimJudge({ sheet, constraint }: Unit, identity: string): Outcome<JudgeBlock> {
+    const functional = this.#functional(sheet);
+    const condition = this.condition(constraint);
+    if (!functional.ok) return functional;
+    if (!condition.ok) return condition;
+    const judge =
+      condition.value.kind === 'rule' ? undefined : this.#judgeOf(condition.value, functional.value, identity);
+    if (judge !== undefined) return success(judge);
+    const message = `${sheet}, ${constraint} or a sheet that they use was changed during the proof`;
+    return failure([{ code: 'changed-meanwhile', message, remedy: 'Run it again.' }]);
+  }
+
+  #judgeOf(condition: Condition, functional: Functional, identity: string): JudgeBlock | undefined {
+    const settings = settingsOf(this.#settings);
+    const claim = provableClaim(condition, functional, settings);
+    if (typeof claim === 'string') return undefined;
+    const isSame = claimIdentity(claimFields(condition, functional, settings, claim), claim) === identity;
+    return isSame ? claimJudge(claim) : undefined;
   }
 
   #withProof(finding: Finding, constraint: Constraint, functional: Functional, onProgress: Progress): Finding {

@@ -1,5 +1,5 @@
 import { spawnSync } from 'node:child_process';
-import { existsSync, mkdtempSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
+import { existsSync, mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterEach, beforeEach, describe, expect, test } from 'vitest';
@@ -32,6 +32,19 @@ describe('signals', () => {
     const ended = await running.ended;
     expect([ended.status, ended.out, ended.err]).toEqual([status, '', '']);
     expect(readdirSync(folder)).toEqual(['.cache']);
+  });
+
+  test('SIGINT ends a proof with status 130, undecided, and keeps what it has judged', async () => {
+    const args = ['prove', 'tpss', 'correlation-coordinate-scaling', '--boxes', '1e9', '--jobs', '2'];
+    const running = start(folder, [...args, '--state', 'search.json', '--format', 'json']);
+    await pause(2500);
+    running.child.kill('SIGINT');
+    const { status, out, err } = await running.ended;
+    expect([status, err]).toEqual([130, 'search.json keeps the search: the same command goes on from there\n']);
+    const { proof } = JSON.parse(out);
+    expect(proof.stop).toBe('interrupted');
+    expect(proof.undecidedShare).toBeGreaterThan(0);
+    expect(JSON.parse(readFileSync(join(folder, 'search.json'), 'utf8')).judged).toHaveLength(proof.boxes);
   });
 });
 

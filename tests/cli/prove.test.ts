@@ -2,6 +2,7 @@ import { mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, test } from 'vitest';
+import { digestOf } from '../../src/proof/certificate.ts';
 import { run } from './stand-in.ts';
 
 let folder = '';
@@ -45,10 +46,67 @@ describe('rungcheck prove and verify', () => {
     expect(JSON.parse(out).proof.undecidedWords).toMatch(/s/);
   });
 
+  test('a search that is kept goes on to the same certificate, and a finished one makes it at once', async () => {
+    const [state, whole, resumed] = ['search.json', 'whole.json', 'resumed.json'].map((name) => join(folder, name)) as [
+      string,
+      string,
+      string,
+    ];
+    const claim = ['prove', 'pw92', 'correlation-non-positive'];
+    await run([...claim, '--certificate', whole]);
+    const first = await run([...claim, '--state', state, '--boxes', '20']);
+    expect(first.status).toBe(1);
+    expect(first.err).toBe(`${state} keeps the search: more --boxes go on from there\n`);
+    expect(JSON.parse(readFileSync(state, 'utf8')).judged).toHaveLength(20);
+    const second = await run([...claim, '--state', state, '--certificate', resumed]);
+    expect(second).toMatchObject({ status: 0, err: '' });
+    expect(readFileSync(resumed, 'utf8')).toBe(readFileSync(whole, 'utf8'));
+    const third = await run([...claim, '--state', state, '--boxes', '1']);
+    expect(third).toEqual(second);
+  });
+
+  test('a state of another claim, a damaged one and another file are refused and left as they are', async () => {
+    const state = join(folder, 'pbe-search.json');
+    const claim = ['prove', 'pbe', 'correlation-non-positive', '--boxes', '30', '--state', state];
+    await run(claim);
+    const text = readFileSync(state, 'utf8');
+    const damaged = text.replace('"judged":"', '"judged":".');
+    const forged = JSON.parse(damaged);
+    for (const [args, content, words] of [
+      [
+        ['prove', 'pbesol', 'correlation-non-positive', '--state', state],
+        text,
+        'the state is of another functional (pbe)',
+      ],
+      [[...claim, '--tolerance', '1e-6'], text, 'the state is of another tolerance'],
+      [[...claim, '--set', 'beta=0.06'], text, 'the state is of other values of parameters'],
+      [claim, damaged, 'does not match its digest'],
+      [claim, JSON.stringify({ ...forged, digest: digestOf(forged) }), 'the state is damaged: letter'],
+      [claim, '{}', 'no state of a search'],
+    ] as const) {
+      writeFileSync(state, content);
+      const { status, out, err } = await run(args);
+      expect([words, status, out]).toEqual([words, 2, '']);
+      expect(err).toContain(`${state}: `);
+      expect(err).toContain(words);
+      expect(readFileSync(state, 'utf8')).toBe(content);
+    }
+  });
+
   test('all faults of a request at once', async () => {
-    const { status, err } = await run(['prove', 'pbee', 'nothing', '--boxes', 'many', '--tolerance', '2']);
+    const { status, err } = await run([
+      'prove',
+      'pbee',
+      'nothing',
+      '--boxes',
+      'many',
+      '--tolerance',
+      '2',
+      '--jobs',
+      '0',
+    ]);
     expect(status).toBe(2);
-    for (const text of ['pbee', 'nothing', '--boxes', '--tolerance']) expect(err).toContain(text);
+    for (const text of ['pbee', 'nothing', '--boxes', '--tolerance', '--jobs']) expect(err).toContain(text);
   });
 
   test('vet --prove turns holds into proved', async () => {

@@ -54,6 +54,15 @@ describe('progress', () => {
       '\r\u001b[Kpbe: 1.0 million points looked at, 2 s\r\u001b[Kpbe: 2.0 million points looked at, 3 s\r\u001b[K',
     );
   });
+
+  test('a note stands behind the count, and a small count in full', () => {
+    const told: string[] = [];
+    let now = 0;
+    const line = progressLine({ watched: true, writeErr: (text) => told.push(text) }, () => now, 'boxes');
+    now = 2000;
+    line.report('pbe', 10_716, '42 % undecided');
+    expect(told).toEqual(['\r\u001b[Kpbe: 10 716 boxes looked at, 42 % undecided, 2 s']);
+  });
 });
 
 describe('faults', () => {

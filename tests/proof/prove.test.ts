@@ -1,16 +1,16 @@
 import { describe, expect, it } from 'vitest';
 import type { Condition } from '../../src/constraint/condition.ts';
 import { customDomain, standardDomain } from '../../src/constraint/domain.ts';
-import { limitInFloat64 } from '../../src/constraint/limit.ts';
-import { buildMargin } from '../../src/constraint/margin.ts';
 import { vetFunctional } from '../../src/constraint/vet.ts';
-import { Graph } from '../../src/graph/graph.ts';
-import { compilePoint } from '../../src/kernel/float64.ts';
 import { proveCondition, withProof } from '../../src/proof/prove.ts';
 import { conditionOf, functionalOf, standardSettings } from '../constraint/catalogue.ts';
+import { sampledOutside } from './sampled-outside.ts';
 
 const prove = (functional: string, condition: string, budget: number, settings = standardSettings) =>
   proveCondition(conditionOf(condition) as Condition, functionalOf(functional), settings, { budget });
+
+/** A million points take a minute each: RUNGCHECK_SAMPLES=1000000 npx vitest run tests/proof. */
+const sampleCount = Number(process.env.RUNGCHECK_SAMPLES ?? 20_000);
 
 describe('known proofs on the standard domain', () => {
   // The bounds are those of the papers: F_x ≤ 1.804 (PBE), 1.174 (SCAN at ζ = 0); E_c ≤ 0; Lieb-Oxford.
@@ -26,7 +26,7 @@ describe('known proofs on the standard domain', () => {
   ])('%s holds %s', (functional, condition, budget) => {
     const { record } = prove(functional, condition, budget);
     expect(record).toMatchObject({ stop: 'decided', provedShare: 1, violatedShare: 0, undecidedShare: 0 });
-    expect(sampledOutside(functional, condition)).toEqual([]);
+    expect(sampledOutside(functional, condition, sampleCount)).toEqual([]);
   });
 
   it('PBE holds the Lieb-Oxford bound on exchange for every s, by a box without end', () => {
@@ -82,31 +82,3 @@ describe('what is not proved', () => {
     expect(claim).toBeUndefined();
   });
 });
-
-/** A million points take a minute each: RUNGCHECK_SAMPLES=1000000 npx vitest run tests/proof. */
-const sampleCount = Number(process.env.RUNGCHECK_SAMPLES ?? 20_000);
-
-/** Sampled points of the domain at which the margin in double precision lies below minus the tolerance and round-off. */
-function sampledOutside(functional: string, id: string): number[][] {
-  const graph = new Graph();
-  const condition = conditionOf(id) as Condition;
-  const margin = buildMargin(graph, condition, functionalOf(functional), {
-    ...standardSettings,
-    limit: limitInFloat64,
-  });
-  const at = compilePoint(graph, margin.node, margin.variables);
-  const outside: number[][] = [];
-  let state = 5;
-  const next = () => {
-    state = (Math.imul(state, 1664525) + 1013904223) >>> 0;
-    return (state + 0.5) / 2 ** 32;
-  };
-  for (let count = 0; count < sampleCount; count++) {
-    const point = margin.variables.map((name) => {
-      const { lower, upper, scale } = standardDomain.axes[name as keyof typeof standardDomain.axes];
-      return scale === 'logarithmic' ? lower * (upper / lower) ** next() : lower + (upper - lower) * next();
-    });
-    if (at(Float64Array.from(point)) < -condition.definition.tolerance - 1e-10) outside.push(point);
-  }
-  return outside;
-}

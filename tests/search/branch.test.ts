@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { type BranchAxis, branchAndBound, middleOf, rootBoxes } from '../../src/search/branch.ts';
+import { branchAndBound } from '../../src/search/box-search.ts';
+import { type BranchAxis, middleOf, rootBoxes } from '../../src/search/branch.ts';
 
 const unitAxis: BranchAxis = { lower: 0, upper: 1, scale: 'linear', divisions: [] };
 

@@ -26,6 +26,11 @@ export function addFigures(program: Command, terminal: Terminal, end: End): void
       'the coordinates shown, from rs, zeta, s, alpha, q (default: those that suit the condition)',
     )
     .option('--cells <number>', 'cells along each axis (default: 121; the violated region is four times as fine)')
+    .option(
+      '--prove',
+      'show what interval arithmetic proves on the plane: regions proved to hold, proved to violate, undecided',
+    )
+    .option('--boxes <budget>', 'boxes to spend on the proof of each panel (default: 100000)')
     .addHelpText(
       'after',
       examples(
@@ -33,11 +38,13 @@ export function addFigures(program: Command, terminal: Terminal, end: End): void
         '  rungcheck map lyp correlation-coordinate-scaling --out lyp.svg',
         '  rungcheck map pbe scan lieb-oxford --width 178mm --out lieb-oxford.png',
         '  rungcheck map p86 correlation-coordinate-scaling --at zeta=0 --at zeta=1 --axes s,rs --out p86.svg',
+        '  rungcheck map lyp correlation-non-positive --axes s,zeta --at rs=1 --prove --out regions.svg',
         '  rungcheck map lyp correlation-non-positive --format csv > cells.csv',
         '',
         'Data:',
         '  .csv   one cell a line: functional, coordinates (the worst ones too), margin; each line is a point for at',
         '  .json  the same with the axes, the violated region as rings, and the lowest point of each panel',
+        '  With --prove .csv has one rectangle of the plane a line with its state, .json has both.',
       ),
     )
     .action(async (names, options) => {

@@ -29,6 +29,8 @@ export function addReport(program: Command, terminal: Terminal, end: End): void 
     .addOption(constraintsOption())
     .addOption(constantsOption())
     .addOption(setOption())
+    .option('--prove', 'try to prove what holds; the maps then show what is proved to hold, to violate, undecided')
+    .option('--boxes <budget>', 'boxes to spend on the proof of each condition (default: 100000)')
     .option('--jobs <n>', 'worker threads (default: one for each core)')
     .option('--cache <folder>', "where findings are kept (default: in the user's folder for caches)")
     .option('--no-cache', 'find everything anew, and keep nothing')
@@ -41,6 +43,7 @@ export function addReport(program: Command, terminal: Terminal, end: End): void 
         '  rungcheck report scan --out scan.html',
         '  rungcheck report pbe pbesol revpbe rpbe --out comparison.html',
         '  rungcheck report ./mine.yaml --domain wide --out mine.html',
+        '  rungcheck report pbe --prove --out pbe.html',
         '',
         'The page draws its maps itself, in any current browser; without scripts everything but maps and curves is there.',
         'Ends with status 0 whatever the verdicts are.',

@@ -11,6 +11,7 @@ import { allOf, explanationOf, findFunctional, loadConditions } from './engine.t
 import { faultProblems } from './faults.ts';
 import { outputProblems, writeOutputFile } from './output-file.ts';
 import { packageRoot } from './package-root.ts';
+import { provedRegions } from './page-regions.ts';
 import { settle } from './problems.ts';
 import { progressLine } from './progress.ts';
 import { openWorkshop, runVet } from './run-vet.ts';
@@ -23,7 +24,7 @@ import { readVetRequest, type VetRequest } from './vet-request.ts';
 
 export type ReportOptions = Pick<
   VetOptions,
-  'out' | 'domain' | 'only' | 'constraints' | 'constants' | 'set' | 'jobs' | 'cache' | 'project'
+  'out' | 'domain' | 'only' | 'constraints' | 'constants' | 'set' | 'jobs' | 'cache' | 'project' | 'prove' | 'boxes'
 >;
 
 /** `rungcheck report`: vets functionals and writes a page about them. */
@@ -39,7 +40,7 @@ export async function reportCommand(
     out === undefined ? [] : outputProblems(out),
   );
   const findings = await vetFor(request, options, terminal);
-  const page = reportOf(request, findings, commandOf(request.sheets, options));
+  const page = await reportOf(request, findings, commandOf(request.sheets, options), terminal);
   if (out === undefined) terminal.writeOut(page);
   else writeOutputFile(out, page);
   return exitStatus.fine;
@@ -61,18 +62,20 @@ async function vetFor(request: VetRequest, { cache }: ReportOptions, terminal: T
   }
 }
 
-function reportOf(request: VetRequest, findings: Findings, command: string): string {
+async function reportOf(request: VetRequest, findings: Findings, command: string, terminal: Terminal): Promise<string> {
   const shelf = openShelf(request.folders);
   const functionals = settle(allOf(request.sheets.map((sheet) => findFunctional(shelf, sheet))));
   const definitions = settle(allOf(request.constraints.map((id) => shelf.constraint(id))));
   const withMargin = definitions.filter(({ rule }) => rule === undefined).map(({ id }) => id);
   const conditions = settle(loadConditions(shelf, withMargin));
   const settings = settingsOf(request.settings);
+  const regions = await provedRegions(request.settings, findings, functionals, conditions, terminal);
+  const asked = { functionals, arguments: request.sheets, conditions, ...settings, regions };
   return reportPage({
     findings,
     functionals,
     conditions: definitions.map((definition) => explanationOf(definition)),
-    kernels: pageKernels({ functionals, arguments: request.sheets, conditions, ...settings }, findings.functionals),
+    kernels: pageKernels(asked, findings.functionals),
     script: asset('report-page.js'),
     style: asset('report-page.css'),
     command,
@@ -97,6 +100,8 @@ function commandOf(sheets: readonly string[], options: ReportOptions): string {
     ...repeated('--constraints', options.constraints),
     ...repeated('--constants', options.constants),
     ...repeated('--set', options.set),
+    ...(options.prove === true ? ['--prove'] : []),
+    ...single('--boxes', options.boxes),
     ...single('--out', options.out),
   ].join(' ');
 }

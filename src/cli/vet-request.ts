@@ -58,7 +58,7 @@ export async function readVetRequest(
       constants: constantsOf(options, project, problems),
       parameters: textsOf(valueOr(parseAssignments('--set', options.set ?? []), new Map(), problems)),
       tolerances: tolerancesOf(project, known, problems),
-      ...proofBudget(options, problems),
+      ...proofBoxes(options, problems),
     },
     acceptances: acceptancesOf(project, known, problems),
     complete: project !== undefined && sheets.length === 0 && options.only === undefined,
@@ -126,7 +126,7 @@ function constantsOf({ constants }: VetOptions, project: Project | undefined, pr
   return { ...Object.fromEntries(own.map(({ name, text }) => [name, text])), ...textsOf(given) };
 }
 
-function textsOf(values: ReadonlyMap<string, GivenValue>): Record<string, string> {
+export function textsOf(values: ReadonlyMap<string, GivenValue>): Record<string, string> {
   return Object.fromEntries([...values].map(([name, { text }]) => [name, text]));
 }
 
@@ -154,12 +154,16 @@ function acceptancesOf(project: Project | undefined, known: readonly string[], p
 
 const usualBoxes = '100000';
 
-function proofBudget({ prove, boxes }: VetOptions, problems: Problem[]): { readonly proofBoxes?: number } {
-  if (prove !== true) {
-    if (boxes !== undefined) problems.push(wrongOption('--boxes is given without --prove', 'Add --prove.'));
-    return {};
-  }
-  return { proofBoxes: valueOr(parseBoxes(boxes ?? usualBoxes), 1, problems) };
+function proofBoxes(options: VetOptions, problems: Problem[]): { readonly proofBoxes?: number } {
+  const budget = valueOr(proofBudget(options), undefined, problems);
+  return budget === undefined ? {} : { proofBoxes: budget };
+}
+
+/** Boxes to spend on each proof; undefined where none is asked for. */
+export function proofBudget({ prove, boxes }: Pick<VetOptions, 'prove' | 'boxes'>): Outcome<number | undefined> {
+  if (prove === true) return parseBoxes(boxes ?? usualBoxes);
+  if (boxes === undefined) return success(undefined);
+  return failure([wrongOption('--boxes is given without --prove', 'Add --prove.')]);
 }
 
 /** Boxes to spend on one proof. */
@@ -177,7 +181,7 @@ function parseShard(text: string | undefined): Outcome<VetRequest['shard']> {
   return failure([wrongOption(`--shard does not understand ${text}`, 'Write i/n, as in --shard 1/4.')]);
 }
 
-function parseJobs(text: string | undefined): Outcome<number> {
+export function parseJobs(text: string | undefined): Outcome<number> {
   if (text === undefined) return success(availableParallelism());
   const jobs = /^\d{1,3}$/.test(text) ? Number(text) : 0;
   if (jobs >= 1) return success(jobs);

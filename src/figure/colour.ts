@@ -24,7 +24,13 @@ export const ink = {
   grid: '#dcdcdc',
   hatch: '#5a1606',
   missing: '#8a8a8a',
+  /** Patterns of regions, behind contour lines. */
+  regionHatch: '#b5532b',
+  dot: '#8a7000',
 } as const;
+
+/** Told apart by hue and by lightness, and light enough for lines and patterns above them. */
+export const regionColours = { proved: '#b4d0e7', violated: '#f0a987', undecided: '#f8f0c4' } as const;
 
 /** Curves: told apart by hue and by lightness, and each has a dash pattern of its own. */
 export const curveColours = ['#1f3b73', '#b8400e', '#2f7f6f', '#7a3e8f', '#8a6d00', '#3d8fc9', '#4a4a4a'] as const;

@@ -1,8 +1,10 @@
 import type { MapPanel, MarginMap } from '../finding/margin-map.ts';
 import { coordinateSymbol } from '../finding/symbols.ts';
+import { countText } from '../report/number-text.ts';
 import { forceNames } from '../report/words.ts';
 import { hasGaps } from './gaps.ts';
 import type { Levels } from './levels.ts';
+import { presentStates } from './region-panel.ts';
 import { numberRuns } from './scale.ts';
 import { listed, noBreak, setTo } from './symbols.ts';
 import type { Run } from './typeface.ts';
@@ -18,12 +20,9 @@ export function captionOf(map: MarginMap, levels: Levels): Run[] {
     ...words(', '),
     ...formula(condition.requirement),
     ...words(` (${condition.status}; local form ${forceNames[condition.force]}), for ${names.join(', ')}. `),
-    ...words(
-      anyViolated
-        ? `Signed margin; hatched, and below zero, where the condition is violated; ${boundaryWords(condition.tolerance)}. `
-        : 'Signed margin; the condition is violated at no point shown. ',
-    ),
-    ...words(levels.kind === 'compressed' ? 'Colour steps are compressed, alike on either side of zero. ' : ''),
+    ...(map.panels.some(({ regions }) => regions !== undefined)
+      ? regionWords(map, anyViolated)
+      : words(marginWords(anyViolated, condition.tolerance, levels))),
     ...constantsWords(map),
     ...sliceWords(map),
     ...words(' Domain: '),
@@ -42,11 +41,40 @@ export function captionOf(map: MarginMap, levels: Levels): Run[] {
   ];
 }
 
+function marginWords(anyViolated: boolean, tolerance: number, { kind }: Levels): string {
+  const margin = anyViolated
+    ? `Signed margin; hatched, and below zero, where the condition is violated; ${boundaryWords(tolerance)}. `
+    : 'Signed margin; the condition is violated at no point shown. ';
+  return `${margin}${kind === 'compressed' ? 'Colour steps are compressed, alike on either side of zero. ' : ''}`;
+}
+
+/** What the regions and the lines of a proof are. */
+function regionWords({ panels, condition: { tolerance, unit } }: MarginMap, anyViolated: boolean): Run[] {
+  const boxes = panels.reduce((sum, { regions }) => sum + (regions?.boxes ?? 0), 0);
+  const stops = panels.map(({ regions }) => regions?.stop);
+  const rewritten = panels.some(({ regions }) => (regions?.rewrites.length ?? 0) > 0);
+  const left = stops.includes('budget') ? 'when the budget of boxes ended' : 'down to the smallest boxes';
+  const states = presentStates(panels.map(({ regions }) => regions));
+  return [
+    ...words('Regions, from '),
+    ...noBreak(words(`${countText(boxes)} ${boxes === 1 ? 'box' : 'boxes'}`)),
+    ...words(` of interval arithmetic${rewritten ? ' after exact rewrites of the formula' : ''}: margin at least −`),
+    ...numberRuns(tolerance),
+    ...words(' wherever the formula has a value'),
+    ...words(states.includes('violated') ? '; margin below that' : ''),
+    ...words(states.includes('undecided') ? `; undecided: neither, ${left}` : ''),
+    ...words('. Shares are of the area as drawn. Lines: signed margin'),
+    ...(unit === null || unit === '' ? [] : [...words(' in '), ...formula(unit)]),
+    ...words(', in double precision and no proof'),
+    ...words(anyViolated ? `, dashed below zero; ${boundaryWords(tolerance)}. ` : '. '),
+  ];
+}
+
 /** A tolerance that the eye could see is told. */
 function boundaryWords(tolerance: number): string {
   return tolerance < 1e-6
-    ? 'the black line is at zero'
-    : `the black line is at −${tolerance}, the tolerance, within which a margin counts as zero`;
+    ? 'the heavy line is at zero'
+    : `the heavy line is at −${tolerance}, the tolerance, within which a margin counts as zero`;
 }
 
 function rangeWords(name: string, lower: number, upper: number | null, note = ''): Run[] {

@@ -18,57 +18,34 @@ export function mapField(
   position: (x: number, y: number) => Place,
   name: string,
 ): string {
-  const field = (values: readonly number[]): Field => ({
-    values,
-    width: map.x.values.length,
-    height: map.y.values.length,
-  });
-  const d = ({ rings }: Region) =>
-    rings
-      .map((ring) =>
-        pathData(
-          ring.map(([x, y]) => [box.x + x * box.width, box.y + y * box.height]),
-          true,
-        ),
-      )
-      .join('');
-  const measured = bridged(panel.margins, map.x.values.length).map((margin) =>
-    compress(levels, settled(margin, map.condition.tolerance)),
-  );
-  const bands = regionsAbove(field(measured), [...levels.levels.keys()])
-    .map((region, index) => ({ path: d(region), fill: stepColour(levels, index + 1) }))
+  const bands = stepRegions(map, panel, levels)
+    .map((region, index) => ({ path: outline(region, box), fill: stepColour(levels, index + 1) }))
     .filter(({ path }) => path !== '')
     .map(({ path, fill }) =>
       element('path', { d: path, fill, stroke: fill, 'stroke-width': 0.04, 'fill-rule': 'evenodd' }),
     );
-  const missing = hasGaps(panel.margins)
-    ? missingCells(d(regionsAbove(field(panel.margins.map((margin) => (margin === null ? 1 : 0))), [0.5])[0] as Region))
-    : '';
   return [
     element('rect', { ...box, fill: stepColour(levels, 0) }),
     ...bands,
     violatedRegion(panel, box, position, `${name}-violated`),
-    missing,
+    missingCells(map, panel, box),
   ].join('');
 }
 
-/** A margin within the tolerance of zero counts as zero: round-off makes no region. */
-function settled(margin: number, tolerance: number): number {
-  return margin < 0 && margin >= -tolerance ? 0 : margin;
+/** For each level, where the margin is at least that. */
+export function stepRegions(map: MarginMap, { margins }: MapPanel, levels: Levels): Region[] {
+  const measured = bridged(margins, map.x.values.length).map((margin) =>
+    compress(levels, settled(margin, map.condition.tolerance)),
+  );
+  return regionsAbove(fieldOf(map, measured), [...levels.levels.keys()]);
 }
 
-type Place = readonly [x: number, y: number];
+function fieldOf({ x, y }: MarginMap, values: readonly number[]): Field {
+  return { values, width: x.values.length, height: y.values.length };
+}
 
-/** Hatching, and a line where the region ends inside the frame. */
-function violatedRegion(
-  { region }: MapPanel,
-  box: Box,
-  position: (x: number, y: number) => Place,
-  clip: string,
-): string {
-  if (region.length === 0) return '';
-  const rings = region.map((ring) => ring.map(([x, y]) => position(x, y)));
-  const outline = rings
+function outline({ rings }: Region, box: Box): string {
+  return rings
     .map((ring) =>
       pathData(
         ring.map((place) => inBox(place, box)),
@@ -76,15 +53,39 @@ function violatedRegion(
       ),
     )
     .join('');
-  const contour = innerLines({ rings })
-    .map((line) => pathData(line.map((place) => inBox(place, box))))
-    .join('');
+}
+
+/** A margin within the tolerance of zero counts as zero: round-off makes no region. */
+function settled(margin: number, tolerance: number): number {
+  return margin < 0 && margin >= -tolerance ? 0 : margin;
+}
+
+export type Place = readonly [x: number, y: number];
+
+/** Hatching, and a line where the region ends inside the frame. */
+function violatedRegion(panel: MapPanel, box: Box, position: (x: number, y: number) => Place, clip: string): string {
+  if (panel.region.length === 0) return '';
+  const rings = panel.region.map((ring) => ring.map(([x, y]) => position(x, y)));
   const lines = { stroke: ink.hatch, 'stroke-width': 0.13, fill: 'none', 'clip-path': `url(#${clip})` };
   return [
-    element('clipPath', { id: clip }, element('path', { d: outline, 'clip-rule': 'evenodd' })),
+    element('clipPath', { id: clip }, element('path', { d: outline({ rings }, box), 'clip-rule': 'evenodd' })),
     element('path', { d: hatch(box), ...lines }),
-    contour === '' ? '' : element('path', { d: contour, fill: 'none', stroke: ink.line, 'stroke-width': contourWidth }),
+    boundaryLine(panel, box, position),
   ].join('');
+}
+
+/** The line where the violated region ends inside the frame. */
+export function boundaryLine(
+  { region }: MapPanel,
+  box: Box,
+  position: (x: number, y: number) => Place,
+  width = contourWidth,
+): string {
+  const rings = region.map((ring) => ring.map(([x, y]) => position(x, y)));
+  const d = innerLines({ rings })
+    .map((line) => pathData(line.map((place) => inBox(place, box))))
+    .join('');
+  return d === '' ? '' : element('path', { d, fill: 'none', stroke: ink.line, 'stroke-width': width });
 }
 
 /** Step 0 lies below the first level, step k between level k − 1 and level k. */
@@ -96,7 +97,8 @@ export function stepColour({ levels }: Levels, step: number): string {
   return step <= zero ? divergingColour(-size(zero + 1 - step)) : divergingColour(size(step - zero));
 }
 
-function inBox([x, y]: readonly [number, number], box: Box): readonly [number, number] {
+/** A place in parts of a box, y downwards, on the drawing. */
+export function inBox([x, y]: readonly [number, number], box: Box): readonly [number, number] {
   return [box.x + x * box.width, box.y + y * box.height];
 }
 
@@ -113,7 +115,10 @@ export function hatch({ x, y, width, height }: Box, step = hatchStep): string {
 }
 
 /** Grey with a dotted edge where the margin has no value. */
-function missingCells(d: string): string {
+export function missingCells(map: MarginMap, { margins }: MapPanel, box: Box): string {
+  if (!hasGaps(margins)) return '';
+  const missing = margins.map((margin) => (margin === null ? 1 : 0));
+  const d = outline(regionsAbove(fieldOf(map, missing), [0.5])[0] as Region, box);
   const dotted = { stroke: ink.line, 'stroke-width': 0.1, 'stroke-dasharray': '0.3 0.5' };
   return element('path', { d, fill: ink.missing, 'fill-rule': 'evenodd', ...dotted });
 }

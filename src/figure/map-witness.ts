@@ -10,6 +10,12 @@ import { words } from './typeset.ts';
 
 const markSize = 1.5;
 
+export interface WitnessMark {
+  readonly content: string;
+  /** What it covers. */
+  readonly areas: readonly Box[];
+}
+
 /** The lowest point: a diamond, filled where it violates the condition, with its coordinates beside it. */
 export function witnessMark(
   map: MarginMap,
@@ -18,9 +24,9 @@ export function witnessMark(
   across: FrameScale,
   up: FrameScale,
   size: number,
-): string {
+): WitnessMark {
   const { lowest } = panel;
-  if (lowest === null) return '';
+  if (lowest === null) return { content: '', areas: [] };
   const { margin, point } = lowest;
   const [atX, atY] = [point[map.x.name], point[map.y.name]];
   // A margin that does not depend on a coordinate is lowest along a whole line.
@@ -55,7 +61,13 @@ export function witnessMark(
   const text = lines.map((line, index) =>
     lineOutlines(line, left + small * 0.35, top + small * (1.02 + index * 1.22), small),
   );
-  return ground + mark + element('g', { fill: ink.text }, text.join(''));
+  return {
+    content: ground + mark + element('g', { fill: ink.text }, text.join('')),
+    areas: [
+      { x: left, y: top, ...label },
+      { x: x - markSize, y: y - markSize, width: 2 * markSize, height: 2 * markSize },
+    ],
+  };
 }
 
 type Place = readonly [x: number, y: number];

@@ -4,11 +4,13 @@ import { ink } from './colour.ts';
 import { type Box, belowFrame, centred, frame, labelsWidth, upright } from './frame.ts';
 import { chooseLevels, type Levels } from './levels.ts';
 import { captionOf } from './map-caption.ts';
-import { mapField } from './map-panel.ts';
+import { mapField, type Place } from './map-panel.ts';
 import { colourScale, scaleLabelsWidth } from './map-scale.ts';
 import { witnessMark } from './map-witness.ts';
 import { type FigureOptions, layoutSize } from './options.ts';
 import { breakLines } from './paragraph.ts';
+import { type RegionLegend, regionLegend } from './region-legend.ts';
+import { regionField, regionPatterns } from './region-panel.ts';
 import { coordinateScale, type FrameScale } from './scale.ts';
 import { type Drawing, element } from './svg.ts';
 import { axisTitle, listed, noBreak, parameterSymbol, setTo } from './symbols.ts';
@@ -20,7 +22,10 @@ const edge = 0.8;
 /** Base line of a title above its panel: a mark at the upper edge stays clear of it. */
 const titleLift = 2.5;
 
-/** The panels of a map on common axes and one scale of colour, with a caption below. */
+/**
+ * The panels of a map on common axes with a caption below: the margin on one scale of colour, or, where it was asked what
+ * is proved, the regions of that with the margin as contour lines.
+ */
 export function drawMap(map: MarginMap, options: FigureOptions): Drawing {
   const { width, size, scale } = layoutSize(options);
   const name = options.name ?? 'map';
@@ -33,13 +38,18 @@ export function drawMap(map: MarginMap, options: FigureOptions): Drawing {
   const panels = map.panels.map((panel, index) => {
     const box = boxes[index] as Box;
     const last = index + columns >= map.panels.length;
+    const position = (x: number, y: number): Place => [across.position(x), 1 - up.position(y)];
+    const witness = witnessMark(map, panel, box, across, up, size);
+    const { regions } = panel;
     return element(
       'g',
       {},
       [
-        mapField(map, panel, levels, box, (x, y) => [across.position(x), 1 - up.position(y)], `${name}-${index}`),
+        regions === undefined
+          ? mapField(map, panel, levels, box, position, `${name}-${index}`)
+          : regionField(map, panel, regions, levels, box, position, name, size, witness.areas),
         frame(box, across, up, { size, labelsBelow: last, labelsLeft: index % columns === 0 }),
-        witnessMark(map, panel, box, across, up, size),
+        witness.content,
         element('g', { fill: ink.text }, titleOf(map, panel, index, box, size)),
         last
           ? element(
@@ -63,22 +73,42 @@ export function drawMap(map: MarginMap, options: FigureOptions): Drawing {
       ].join(''),
     );
   });
-  const colours =
-    colourScale(levels, layout.scale, size) +
-    element('g', { fill: ink.text }, scaleTitle(map, layout.scale, width, size));
+  const legend = showsRegions(map)
+    ? regionsBelow(map, layout, width, size, name)
+    : { height: 0, content: colourBar(map, levels, layout.scale, width, size) };
   const caption = options.caption ? breakLines(captionOf(map, levels), width - 2 * edge, size) : [];
-  const captionTop = layout.bottom + size * 1.9;
+  const below = layout.bottom + legend.height;
+  const captionTop = below + size * 1.9;
   const lines = caption.map((line, index) => lineOutlines(line, edge, captionTop + index * size * 1.3, size));
   const bottom =
-    caption.length === 0 ? layout.bottom + size * 0.4 : captionTop + (caption.length - 1) * size * 1.3 + size * 0.5;
+    caption.length === 0 ? below + size * 0.4 : captionTop + (caption.length - 1) * size * 1.3 + size * 0.5;
   return {
     width,
     scale,
     height: Math.ceil(bottom * 10) / 10,
     title: `Margin of ${map.condition.title} for ${[...new Set(map.panels.map(({ functional }) => functional.name))].join(', ')}`,
     description: plainText(captionOf(map, levels)).replaceAll('\u00a0', ' '),
-    content: [...panels, colours, element('g', { fill: ink.text }, lines.join(''))].join(''),
+    content: [
+      showsRegions(map) ? regionPatterns(name) : '',
+      ...panels,
+      legend.content,
+      element('g', { fill: ink.text }, lines.join('')),
+    ].join(''),
   };
+}
+
+function showsRegions({ panels }: MarginMap): boolean {
+  return panels.some(({ regions }) => regions !== undefined);
+}
+
+function colourBar(map: MarginMap, levels: Levels, box: Box, width: number, size: number): string {
+  return colourScale(levels, box, size) + element('g', { fill: ink.text }, scaleTitle(map, box, width, size));
+}
+
+function regionsBelow(map: MarginMap, { bottom }: Layout, width: number, size: number, name: string): RegionLegend {
+  const gap = size * 0.9;
+  const legend = regionLegend(map, edge, bottom + gap, width - 2 * edge, size, name);
+  return { ...legend, height: legend.height + gap };
 }
 
 interface Layout {
@@ -98,7 +128,8 @@ function layOut(map: MarginMap, levels: Levels, width: number, size: number): La
   const between = size * 1.5;
   const rough = coordinateScale(map.y, { length: width / columns, size, direction: 'up' });
   const left = edge + size * 1.25 + labelsWidth(rough, size) + 0.9 + size * 0.3;
-  const right = edge + size * 0.9 + 2.6 + scaleLabelsWidth(levels, size);
+  // Beside regions there is no scale, only half of the last label below.
+  const right = showsRegions(map) ? edge + size : edge + size * 0.9 + 2.6 + scaleLabelsWidth(levels, size);
   const panelWidth = (width - left - right - between * (columns - 1)) / columns;
   const panelHeight = panelWidth * (columns === 1 ? (width > 120 ? 0.6 : 0.8) : 0.95);
   const top = size * 1.3 + titleLift;

@@ -1,4 +1,5 @@
 import type { DomainRecord, Finding } from './finding.ts';
+import type { PlaneRegions } from './regions.ts';
 
 /** A coordinate of a picture: its values rise, both ends included. */
 export interface PictureAxis {
@@ -37,6 +38,8 @@ export interface MapPanel {
   readonly violatedCells: number;
   /** Points at which the margin was evaluated. */
   readonly points: number;
+  /** What is proved on the plane, where a proof was asked for. */
+  readonly regions?: PlaneRegions;
 }
 
 export interface MapCondition {

@@ -1,4 +1,5 @@
 import { chooseLevels } from '../figure/levels.ts';
+import type { PlaneRegions } from '../finding/regions.ts';
 import type { MapPanelRecord, MapRecord } from '../page/page-data.ts';
 import { unitAt } from './coordinate.ts';
 import { draw } from './dom.ts';
@@ -8,6 +9,7 @@ import { measure, paintField, violatedOutline } from './map-paint.ts';
 import { axisRecord, type MapState } from './map-state.ts';
 import { coordinateTitle } from './number.ts';
 import type { ProjectionRequest, ProjectionResult } from './projection.ts';
+import { contourLines, regionLegend, regionPatterns, regionShapes } from './region-layer.ts';
 import { coordinateTicks } from './ticks.ts';
 
 export interface DrawnMap {
@@ -23,6 +25,8 @@ export function drawMap(
     readonly layer: SVGSVGElement;
     readonly width: number;
     readonly name: string;
+    /** What is proved on the plane; its regions then stand in place of the margin's colours. */
+    readonly regions: PlaneRegions | undefined;
   },
   record: MapRecord,
   panel: MapPanelRecord,
@@ -31,7 +35,7 @@ export function drawMap(
   { margins }: ProjectionResult,
   isDark: boolean,
 ): DrawnMap {
-  const { canvas, layer, name } = figure;
+  const { canvas, layer, name, regions } = figure;
   const width = Math.max(280, figure.width);
   const left = 62;
   const box: Box = {
@@ -41,7 +45,8 @@ export function drawMap(
     height: Math.round(Math.min(460, Math.max(230, (width - left) * 0.62))),
   };
   const legend: Box = { x: left, y: box.y + box.height + 72, width: box.width, height: 14 };
-  const height = legend.y + legend.height + 26;
+  const proof = regions && regionLegend(regions, { ...legend, y: legend.y - 14 }, name);
+  const height = legend.y + (proof === undefined ? legend.height + 26 : proof.height);
   const [w, h] = [x.values.length, y.values.length];
   const levels = chooseLevels([...margins], record.tolerance);
   const field = measure(margins, w, h, levels, record.tolerance);
@@ -56,9 +61,15 @@ export function drawMap(
   const [across, up] = [axisRecord(record, state.x), axisRecord(record, state.y)];
   layer.setAttribute('viewBox', `0 0 ${width} ${height}`);
   const cross = draw('g', { class: 'cross' });
+  const shapes =
+    regions === undefined
+      ? outline.any
+        ? [draw('path', { d: everything + kept, fill: `url(#${hatch})`, 'fill-rule': 'evenodd' })]
+        : []
+      : [...regionShapes(regions, across, up, box, name), ...contourLines(margins, w, h, levels, box)];
   layer.replaceChildren(
-    draw('defs', {}, hatchPattern(hatch)),
-    ...(outline.any ? [draw('path', { d: everything + kept, fill: `url(#${hatch})`, 'fill-rule': 'evenodd' })] : []),
+    draw('defs', {}, hatchPattern(hatch), ...(regions === undefined ? [] : regionPatterns(name))),
+    ...shapes,
     ...outline.boundary.map((line) => draw('path', { d: pathOf(line.map(inBox)), class: 'zero' })),
     frameOf(
       box,
@@ -66,7 +77,7 @@ export function drawMap(
       { ticks: coordinateTicks(up, box.height / 40), title: coordinateTitle(state.y, true) },
     ),
     ...witnessMark(record, panel, state, box),
-    legendOf(levels, legend, hatch, isDark, record.unit),
+    proof?.group ?? legendOf(levels, legend, hatch, isDark, record.unit),
     cross,
   );
   return {

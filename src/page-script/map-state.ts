@@ -1,5 +1,9 @@
+import type { PlaneRegions, RegionTree } from '../finding/regions.ts';
+import { regionsOnPlane } from '../map/regions.ts';
+import { inDrawnOrder } from '../page/first-plane.ts';
 import type { AxisRecord, MapPanelRecord, MapRecord } from '../page/page-data.ts';
-import { lineOf, worstLine } from './coordinate.ts';
+import type { Axis } from '../search/axis.ts';
+import { axisOf, lineOf, worstLine } from './coordinate.ts';
 import type { Line, ProjectionRequest } from './projection.ts';
 
 /** What a map shows: two coordinates across and up; each other one held at a value, or at its worst. */
@@ -9,13 +13,11 @@ export interface MapState {
   readonly held: ReadonlyMap<string, number | 'worst'>;
 }
 
-const preference = ['s', 's_up', 'rs', 'alpha', 'zeta', 's_dn', 'q', 'alpha_up', 'alpha_dn', 'cosine'];
-
 /** More coordinates than these at their worst are coarse and slow; the others begin at the witness. */
 const worstAtFirst = 2;
 
 export function firstState(record: MapRecord, { variables, witness }: MapPanelRecord): MapState {
-  const [x = '', y = '', ...rest] = preference.filter((name) => variables.includes(name));
+  const [x = '', y = '', ...rest] = inDrawnOrder(variables);
   const held = rest.map(
     (name) =>
       [name, rest.length <= worstAtFirst ? 'worst' : (witness?.[name] ?? axisRecord(record, name).lower)] as const,
@@ -34,9 +36,7 @@ export function withAxis(state: MapState, which: 'x' | 'y', name: string): MapSt
   if (name === left) return state;
   if (name === other) return { ...state, x: state.y, y: state.x };
   const freed = state.held.get(name) ?? 'worst';
-  const order = preference.filter(
-    (candidate) => candidate === left || (state.held.has(candidate) && candidate !== name),
-  );
+  const order = inDrawnOrder([left, ...[...state.held.keys()].filter((candidate) => candidate !== name)]);
   const held = order.map(
     (candidate) => [candidate, candidate === left ? freed : (state.held.get(candidate) ?? 'worst')] as const,
   );
@@ -61,4 +61,15 @@ export function requestOf(record: MapRecord, kernel: number, state: MapState, gr
     y: lineOf(axisRecord(record, state.y), height, true),
     rest,
   };
+}
+
+/** What is proved on the plane of a state. */
+export function shownRegions(record: MapRecord, tree: RegionTree, { x, y, held }: MapState): PlaneRegions {
+  const fixed = [...held].filter((entry): entry is [string, number] => entry[1] !== 'worst');
+  const isOnPlane = (name: string, value: number) => held.get(name) === 'worst' || held.get(name) === value;
+  const examples = (tree.examples ?? [])
+    .filter((example) => Object.entries(example.held).every(([name, value]) => isOnPlane(name, value)))
+    .map((example) => example.tree);
+  const [across, up] = [x, y].map((name) => axisOf(axisRecord(record, name), true)) as [Axis, Axis];
+  return regionsOnPlane(tree, across, up, new Map(fixed), examples);
 }

@@ -1,11 +1,13 @@
+import type { PlaneRegions } from '../finding/regions.ts';
 import type { MapPanelRecord, MapRecord, PageData } from '../page/page-data.ts';
 import { unitAt } from './coordinate.ts';
 import { draw, make } from './dom.ts';
 import { mapControls } from './map-controls.ts';
 import { type DrawnMap, drawMap } from './map-figure.ts';
-import { axisRecord, firstState, type Grain, type MapState, requestOf } from './map-state.ts';
+import { axisRecord, firstState, type Grain, type MapState, requestOf, shownRegions } from './map-state.ts';
 import type { ProjectionRequest, ProjectionResult } from './projection.ts';
 import { readingNodes, readingWords, readPoint } from './readout.ts';
+import { regionSwitch, regionWords } from './region-note.ts';
 import type { Office } from './work.ts';
 
 export interface View {
@@ -72,7 +74,31 @@ export function mapView(
     'aria-label': label,
   });
   stage.append(canvas, layer);
-  host.replaceChildren(stage, make('div', { class: 'beside' }, controls, readout));
+  const proof = make('div', { class: 'controls' });
+  host.replaceChildren(stage, make('div', { class: 'beside' }, ...(panel.regions ? [proof] : []), controls, readout));
+  let showsProof = panel.regions !== undefined;
+  let known: { readonly state: MapState; readonly regions: PlaneRegions } | undefined;
+
+  /** What is proved on the plane of the picture. */
+  const regionsOf = ({ state: shown }: Picture): PlaneRegions | undefined => {
+    if (panel.regions === undefined || !showsProof) return undefined;
+    if (known?.state !== shown) known = { state: shown, regions: shownRegions(record, panel.regions, shown) };
+    return known.regions;
+  };
+  const tellProof = (shown: MapState) => {
+    if (panel.regions === undefined) return;
+    const toggle = (isOn: boolean) => {
+      showsProof = isOn;
+      redraw();
+      tellProof(shown);
+      document.getElementById(`${name}-proof`)?.focus();
+    };
+    proof.replaceChildren(
+      regionSwitch(name, showsProof, toggle),
+      ...(showsProof ? [regionWords(panel.regions, shown.held, record.tolerance)] : []),
+    );
+  };
+  tellProof(state);
 
   const compute = (grain: Grain, rank: number) => {
     if (pending !== undefined) tools.office.forget(pending.id);
@@ -93,7 +119,7 @@ export function mapView(
 
   const redraw = () => {
     if (picture === undefined || stage.clientWidth === 0) return;
-    const figure = { canvas, layer, width: stage.clientWidth, name };
+    const figure = { canvas, layer, width: stage.clientWidth, name, regions: regionsOf(picture) };
     drawn = drawMap(figure, record, panel, picture.state, picture.request, picture.result, tools.isDark());
     drawn.mark(spot);
   };
@@ -143,6 +169,7 @@ export function mapView(
       ...mapControls(record, panel, state, name, (next, whileMoving) => {
         const before = state;
         state = next(before);
+        tellProof(state);
         if (state.x !== before.x || state.y !== before.y) {
           const focused = document.activeElement?.id ?? '';
           spot = undefined;

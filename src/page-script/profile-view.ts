@@ -1,13 +1,18 @@
+import { regionsOnPlane } from '../map/regions.ts';
 import type { MapPanelRecord, MapRecord, PageData } from '../page/page-data.ts';
-import { lineOf, unitAt } from './coordinate.ts';
+import { axisOf, lineOf, unitAt } from './coordinate.ts';
 import { type DrawnCurves, drawCurves } from './curve-figure.ts';
 import { draw, make } from './dom.ts';
 import { runKernel } from './kernel.ts';
 import { axisRecord } from './map-state.ts';
 import type { Tools, View } from './map-view.ts';
 import { readingNodes, readingWords, readPoint } from './readout.ts';
+import { regionLegend, regionPatterns, regionShapes } from './region-layer.ts';
+import { regionWords } from './region-note.ts';
 
 const placeCount = 257;
+/** Of the strip that shows what is proved, pixels. */
+const stripHeight = 12;
 
 /** A margin that depends on one coordinate, as a curve. */
 export function profileView(
@@ -30,7 +35,8 @@ export function profileView(
     { class: 'stage', tabindex: 0, role: 'application', 'aria-roledescription': 'curve', 'aria-label': label },
     layer,
   );
-  host.replaceChildren(stage, make('div', { class: 'beside' }, readout));
+  const note = panel.regions === undefined ? [] : [regionWords(panel.regions, undefined, record.tolerance)];
+  host.replaceChildren(stage, make('div', { class: 'beside' }, ...note, readout));
   let drawn: DrawnCurves | undefined;
   const worst = () => {
     const at = panel.witness?.[coordinate];
@@ -53,6 +59,21 @@ export function profileView(
     const unit = record.unit === '' ? '' : ` (${record.unit})`;
     const look = { width: Math.max(280, stage.clientWidth), height: 320, name, title: `margin${unit}` };
     drawn = drawCurves(layer, look, axis, places, [{ values, look: 0 }], [{ value: 0, label: '', hatched: 'below' }]);
+    if (panel.regions !== undefined) {
+      const { box } = drawn;
+      const known = { ...axisOf(axis, true) };
+      const regions = regionsOnPlane(panel.regions, known, { ...known, name: '' }, new Map());
+      const strip = { ...box, y: box.y + box.height - stripHeight, height: stripHeight };
+      const shapes = regionShapes(regions, axis, undefined, strip, name);
+      const legend = regionLegend(regions, { ...box, y: box.y + box.height + 50 }, name);
+      layer.append(
+        draw('defs', {}, ...regionPatterns(name)),
+        ...shapes,
+        draw('rect', { ...strip, class: 'edge' }),
+        legend.group,
+      );
+      layer.setAttribute('viewBox', `0 0 ${look.width} ${box.y + box.height + 50 + legend.height}`);
+    }
     drawn.mark(part);
   };
   for (const kind of ['pointermove', 'pointerdown'] as const) {

@@ -36,6 +36,7 @@ export function askedSection(input: ReportInput): Markup {
 <dt>domain</dt><dd>${first.domain.name}: ${notation(domainWords(commonDomain(widest)).replaceAll('\u00a0', ' '))}; a condition may hold some of them fixed</dd>
 <dt>points</dt><dd>${countText(points)} on grids and samples; then local search, and the worst point again in high precision</dd>
 <dt>tolerance</dt><dd>a margin below minus the tolerance is a violation; it is ${notation(usual)} unless a condition states another</dd>
+<dt>proofs</dt><dd>${proofWords(findings.functionals)}</dd>
 </dl>
 ${constantRows.length === 0 ? '' : html`<h3>Constants</h3><div class="scroller" tabindex="0" role="region" aria-label="Constants"><table class="parameters"><thead><tr><th scope="col">constant</th><th scope="col">value</th><th scope="col">meaning</th><th scope="col">source</th></tr></thead><tbody>${constantRows}</tbody></table></div>`}
 <h3>Sheets</h3>
@@ -44,4 +45,13 @@ ${sheetsOf(functionals).map(
     html`<details class="source"><summary>${name} <code>${id}.yaml</code></summary><p class="hash">SHA-256 <code>${createHash('sha256').update(text).digest('hex')}</code></p><pre tabindex="0">${text}</pre></details>`,
 )}
 </section>`;
+}
+
+function proofWords(functionals: readonly FunctionalFindings[]): Markup {
+  const proofs = functionals.flatMap(({ findings }) =>
+    findings.flatMap(({ proof }) => (proof === undefined ? [] : [proof])),
+  );
+  if (proofs.length === 0) return html`not asked for: “holds” means that no violation was found`;
+  const boxes = proofs.reduce((sum, proof) => sum + proof.boxes, 0);
+  return html`branch and bound on ${countText(boxes)} boxes with interval arithmetic rounded outward; “proved” is said of the stated domain, to the tolerance, wherever the formula has a value. Conditions asked at points and those with a limit cannot be proved so`;
 }

@@ -1,5 +1,6 @@
 import type { Finding, FunctionalFindings } from '../finding/finding.ts';
 import type { Explanation } from '../report/explain.ts';
+import { percentText } from '../report/number-text.ts';
 import { forceWords, statusWords } from '../report/words.ts';
 import { findingDetail } from './detail.ts';
 import { html, joined, type Markup } from './markup.ts';
@@ -82,20 +83,32 @@ ${map < 0 ? html`` : html`<div class="map" data-map="${map}"></div>`}
 function byFunctional(across: readonly Finding[], functionals: readonly FunctionalFindings[]): Markup {
   const entries = across.map((finding, index) => ({ finding, functional: functionals[index] as FunctionalFindings }));
   const told = entries.filter(({ finding }) => finding.verdict === 'violated' || finding.verdict === 'undecided');
-  const silent = entries.filter(({ finding }) => finding.verdict === 'holds' || finding.verdict === 'proved');
+  const proved = entries.filter(({ finding }) => finding.verdict === 'proved');
+  const silent = entries.filter(({ finding }) => finding.verdict === 'holds');
   const idle = entries.filter(({ finding }) => finding.verdict === 'not-applicable');
   return html`${told.map(({ finding, functional }) => html`<section class="of"><h4>${functional.name} ${verdictMark(finding)}</h4>${findingDetail(finding, functional)}</section>`)}
-${
-  silent.length === 0
-    ? ''
-    : html`<p class="holding"><span class="label">no violation found</span> ${joined(
-        silent.map(
-          ({ finding, functional }) => html`${functional.name} <span class="number">(${marginShort(finding)})</span>`,
-        ),
-        ', ',
-      )}</p>`
-}
+${holding('proved on the whole domain', proved)}${holding('no violation found', silent)}
 ${idle.length === 0 ? '' : html`<p class="note">Does not apply to ${idle.map(({ functional }) => functional.name).join(', ')}.</p>`}`;
+}
+
+function holding(
+  label: string,
+  entries: readonly { readonly finding: Finding; readonly functional: FunctionalFindings }[],
+): Markup {
+  if (entries.length === 0) return html``;
+  return html`<p class="holding"><span class="label">${label}</span> ${joined(
+    entries.map(
+      ({ finding, functional }) =>
+        html`${functional.name} <span class="number">(${marginShort(finding)}${partlyProved(finding)})</span>`,
+    ),
+    ', ',
+  )}</p>`;
+}
+
+/** Of what holds without being proved: how much of the domain is. */
+function partlyProved({ verdict, proof }: Finding): string {
+  if (verdict !== 'holds' || proof === undefined || proof.stop === 'not-provable') return '';
+  return `; proved on ${percentText(proof.provedShare)}, undecided on ${percentText(proof.undecidedShare)}`;
 }
 
 function notAsked(entries: readonly Entry[]): Markup {

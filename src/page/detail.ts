@@ -1,10 +1,11 @@
 import type { Finding, FunctionalFindings, SequenceRecord } from '../finding/finding.ts';
 import { coordinateSymbol } from '../finding/symbols.ts';
 import { countText, leadingDigits, percentText, roundTripText, shortText } from '../report/number-text.ts';
+import { isProved } from '../report/proof-text.ts';
 import { commonDomain, fullPlace, knownCoordinates, ownDomainWords } from '../report/words.ts';
 import { html, type Markup } from './markup.ts';
 import { notation } from './notation.ts';
-import { gateNames } from './words.ts';
+import { gateNames, listed, plural } from './words.ts';
 
 const shownDigits = 20;
 
@@ -25,6 +26,7 @@ ${item('cause', finding.cause?.kind === 'printed-digits' ? notation(finding.caus
 ${item('counts as', isViolated ? html`<span class="gate gate-${finding.gate}">${gateNames[finding.gate]}</span> ${notation(finding.gateReason)}` : '')}
 ${item('looked at', own === '' ? '' : notation(own))}
 ${item('how', notation(finding.reason))}
+${item('proof', proofWords(finding))}
 ${item('constants', constantWords(finding))}
 </dl>${(finding.sequences ?? []).map(sequenceDetail)}`;
 }
@@ -63,6 +65,29 @@ function boundaryWords({ through }: Finding): Markup | string {
       : [`${coordinateSymbol(coordinate)} = ${ends.map((end) => shortText(end, 6)).join(' and ')}`];
   });
   return words.length === 0 ? '' : notation(`${words.join('; ')}, going from the worst point along each`);
+}
+
+/** What boxes decided: shares of the whole domain, and what is left. */
+function proofWords({ proof, tolerance }: Finding): Markup | string {
+  if (proof === undefined) return '';
+  if (proof.stop === 'not-provable') return html`none: ${notation(proof.reason)}`;
+  const effort = `${countText(proof.boxes).replaceAll(' ', '\u00a0')} ${proof.boxes === 1 ? 'box' : 'boxes'}, the smallest after ${plural(proof.deepest, 'halving')}`;
+  const method = `interval arithmetic rounded outward on ${effort}; tolerance ${shortText(tolerance)}`;
+  const rewritten = proof.rewrites.length === 0 ? '' : `; exact rewrites: ${proof.rewrites.join(', ')}`;
+  if (isProved(proof))
+    return notation(`proved on the whole domain, wherever the formula has a value: ${method}${rewritten}`);
+  const share = (part: number, state: string, where: string) =>
+    part === 0
+      ? []
+      : [`${state} on ${percentText(part).replaceAll(' ', '\u00a0')}${where === '' ? '' : ` (${where})`}`];
+  const shares = [
+    ...share(proof.provedShare, 'proved to hold', ''),
+    ...share(proof.violatedShare, 'proved to violate', proof.violatedWords),
+    ...share(proof.undecidedShare, 'undecided', proof.undecidedWords),
+  ];
+  const certified = proof.certifiedAtWitness ? 'The violation at the worst point is certified. ' : '';
+  const none = proof.violatedShare === 0 && !proof.certifiedAtWitness ? 'Not a proof of the condition. ' : '';
+  return notation(`Of the domain ${listed(shares)}. ${certified}${none}By ${method}${rewritten}.`);
 }
 
 function constantWords({ constants }: Finding): string {

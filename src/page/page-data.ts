@@ -1,4 +1,5 @@
 import type { DomainRecord, Finding } from '../finding/finding.ts';
+import type { RegionTree } from '../finding/regions.ts';
 
 /*
  * What the page's script is given: plain data, written into the page as JSON, beside the generated functions that the
@@ -37,6 +38,8 @@ export interface MapPanelRecord {
   readonly fixed: Readonly<Record<string, number>>;
   readonly witness: Readonly<Record<string, number>> | null;
   readonly margin: number | null;
+  /** What is proved, where that was asked and boxes can tell. */
+  readonly regions?: RegionTree;
 }
 
 export interface MapRecord {

@@ -5,6 +5,7 @@ import { limitInFloat64 } from '../constraint/limit.ts';
 import { buildMargin, type Margin } from '../constraint/margin.ts';
 import { energiesAt } from '../evaluate/energies.ts';
 import type { Finding, FunctionalFindings } from '../finding/finding.ts';
+import type { RegionTree } from '../finding/regions.ts';
 import type { Functional } from '../functional/functional.ts';
 import { instantiate } from '../functional/instance.ts';
 import { variableSlice } from '../functional/variable-place.ts';
@@ -35,6 +36,8 @@ export interface PageRequest {
   readonly domain: Domain;
   readonly constants: ReadonlyMap<string, Rational>;
   readonly parameters: ReadonlyMap<string, Rational>;
+  /** Of a condition's id and the index of a functional. */
+  readonly regions?: (condition: string, functional: number) => RegionTree | undefined;
 }
 
 /** The page's data, and the bodies of the functions (values, out, tables, erf, lambertW) that its kernels refer to. */
@@ -107,7 +110,17 @@ export function pageKernels(request: PageRequest, findings: readonly FunctionalF
         bounds.push(...boundOf(condition, margin, functional));
       if (variables.length === 0) return [];
       const kernel = add(margin.graph, [margin.node], ['margin'], variables, false);
-      return [{ functional: index, kernel, variables, fixed: fixedValues(margin), ...worstOf(finding) }];
+      const regions = request.regions?.(definition.id, index);
+      return [
+        {
+          functional: index,
+          kernel,
+          variables,
+          fixed: fixedValues(margin),
+          ...worstOf(finding),
+          ...(regions === undefined ? {} : { regions }),
+        },
+      ];
     });
     if (panels.length === 0) continue;
     maps.push({

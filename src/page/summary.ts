@@ -34,7 +34,17 @@ function oneSummary(functional: FunctionalFindings): Markup {
 <p class="note">${countWords(functional)}</p>
 ${list.length === 0 ? '' : html`<ol class="broken">${list.map(line)}</ol>`}
 ${ladders(functional)}
-<p class="note">A whole rung: no violation was found on the domain, which is not a proof. A broken rung: the worst point was confirmed in high precision.${skipped(functional)}</p>`;
+<p class="note">A whole rung: no violation was found on the domain, which is not a proof. A broken rung: the worst point was confirmed in high precision.${provedWords(functional)}${skipped(functional)}</p>`;
+}
+
+/** What a double rung is, and how far the proofs that were tried for the others came. */
+function provedWords({ findings }: FunctionalFindings): string {
+  const tried = findings.filter(({ proof }) => proof !== undefined && proof.stop !== 'not-provable');
+  if (tried.length === 0) return '';
+  const count = (of: (finding: Finding) => boolean) => tried.filter(of).length;
+  const certified = count(({ verdict, proof }) => verdict === 'violated' && proof?.certifiedAtWitness === true);
+  const open = count(({ verdict }) => verdict === 'holds' || verdict === 'undecided');
+  return ` A double rung: proved on the whole domain by interval arithmetic, to the tolerance stated. Of ${plural(tried.length, 'condition')} that boxes can decide, ${listed([`${count(({ verdict }) => verdict === 'proved')} are proved`, `${certified} have a certified violation`, `${open} are left undecided in part`])}.`;
 }
 
 /** By how much and where; of what has no margin, only where. */

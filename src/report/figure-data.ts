@@ -1,12 +1,40 @@
 import type { CurveSet } from '../finding/curves.ts';
 import type { MarginMap } from '../finding/margin-map.ts';
+import { regionStates } from '../finding/regions.ts';
 import { roundTripText } from './number-text.ts';
+
+/** A map's data as comma-separated text: its cells, or its rectangles where it was asked what is proved. */
+export function mapCsv(map: MarginMap): string {
+  return map.panels.some(({ regions }) => regions !== undefined) ? regionsCsv(map) : cellsCsv(map);
+}
+
+/**
+ * One rectangle a line: the functional, its bounds along the coordinates shown, the fixed coordinates, and its state:
+ * proved, violated, undecided.
+ */
+function regionsCsv({ x, y, panels }: MarginMap): string {
+  const parameters = [...new Set(panels.flatMap((panel) => Object.keys(panel.parameters)))];
+  const fixed = [...new Set(panels.flatMap((panel) => Object.keys(panel.fixed)))];
+  const bounds = [x, y].flatMap(({ name }) => [`${name}_lower`, `${name}_upper`]);
+  const lines = panels.flatMap((panel) =>
+    regionStates.flatMap((state) =>
+      (panel.regions?.[state] ?? []).map((rectangle) => [
+        panel.functional.id,
+        ...parameters.map((name) => panel.parameters[name] ?? ''),
+        ...rectangle.map((bound) => cellText(bound)),
+        ...fixed.map((name) => cellText(panel.fixed[name])),
+        state,
+      ]),
+    ),
+  );
+  return csv([['functional', ...parameters, ...bounds, ...fixed, 'state'], ...lines]);
+}
 
 /**
  * A map as comma-separated text, one cell a line: the functional, the coordinates (shown, fixed and worst) and the margin;
  * empty where there is no value or the margin does not depend on a coordinate.
  */
-export function mapCsv({ x, y, panels }: MarginMap): string {
+function cellsCsv({ x, y, panels }: MarginMap): string {
   const others = ['rs', 'zeta', 's', 'alpha', 'q'].filter(
     (name) =>
       name !== x.name && name !== y.name && panels.some(({ fixed, worstAt }) => name in fixed || name in worstAt),

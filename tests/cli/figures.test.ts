@@ -36,6 +36,29 @@ describe('rungcheck map', () => {
     expect(JSON.parse(at.out).points[0].Fc).toBeCloseTo(Number(margin), 12);
   });
 
+  test('--prove: csv and json hold the same rectangles, which cover the plane', async () => {
+    const asked = ['map', 'revpbe', 'exchange-lieb-oxford', '--cells', '21', '--prove', '--boxes', '400'];
+    const csv = await run([...asked, '--format', 'csv']);
+    const [{ regions }] = JSON.parse((await run([...asked, '--format', 'json'])).out).panels;
+    const [header, ...lines] = csv.out.trimEnd().split('\n');
+    expect(header).toBe('functional,s_lower,s_upper,rs_lower,rs_upper,zeta,state');
+    const rows = lines.map((line) => line.split(','));
+    for (const state of ['proved', 'violated', 'undecided']) {
+      const own = rows.filter((row) => row.at(-1) === state).map((row) => row.slice(1, 5).map(Number));
+      expect(own).toEqual(regions[state]);
+    }
+    expect(rows.reduce((sum, row) => sum + Number(row[2]) - Number(row[1]), 0)).toBeCloseTo(5, 12);
+    // s ≥ 3.22 (Y. Zhang, W. Yang, Phys. Rev. Lett. 80, 890 (1998), in the condition's sheet).
+    expect(regions.shares.violated).toBeCloseTo((5 - 3.22) / 5, 2);
+  });
+
+  test('--prove of a condition that boxes cannot decide, and --boxes alone, are refused with a remedy', async () => {
+    const limit = await run(['map', 'pbe', 'correlation-kinetic-bound', '--cells', '11', '--prove', '--format', 'csv']);
+    expect([limit.status, limit.err]).toEqual([2, expect.stringMatching(/not provable by boxes: .*limit/s)]);
+    const boxes = await map('--boxes', '5', '--format', 'csv');
+    expect([boxes.status, boxes.err]).toEqual([2, expect.stringContaining('Add --prove.')]);
+  });
+
   test('all faults of a request at once', async () => {
     const { status, err } = await run([
       'map',

@@ -3,12 +3,16 @@ import { describe, expect, test } from 'vitest';
 import { drawMap } from '../../src/figure/map.ts';
 import { drawPlot } from '../../src/figure/plot.ts';
 import { svgDocument } from '../../src/figure/svg.ts';
-import { curveOf, curvesOf, hostile, mapOf, panelOf } from './made-up.ts';
+import { curveOf, curvesOf, hostile, mapOf, panelOf, regionsTo } from './made-up.ts';
 
 const options = { width: 86, points: 7, caption: true };
 const map = mapOf(
   panelOf((s) => 2 - s),
   panelOf((s, alpha) => (alpha < 1 ? null : s), hostile),
+);
+const proved = mapOf(
+  { ...panelOf((s) => 2 - s), regions: regionsTo(3) },
+  { ...panelOf((s, alpha) => (alpha < 1 ? null : s), hostile), regions: regionsTo(5) },
 );
 const curves = curvesOf(
   curveOf('First', (s) => 1 + s / 4),
@@ -17,6 +21,7 @@ const curves = curvesOf(
 );
 const figures = [
   ['a map', () => svgDocument(drawMap(map, options))],
+  ['a map of what is proved', () => svgDocument(drawMap(proved, options))],
   ['curves', () => svgDocument(drawPlot(curves, options))],
 ] as const;
 
@@ -47,6 +52,45 @@ test('the violated region is hatched and has a line at its inner edge: s = 2 of 
     new RegExp(`<path d="M${edge} [\\d.]+L${edge} [\\d.]+" fill="none" stroke="#1a1a1a" stroke-width="0.4"/>`),
   );
   expect(svg).toMatch(/clip-path="url\(#map-0-violated\)"/);
+});
+
+describe('a map of what is proved', () => {
+  const draw = (violated: number) =>
+    drawMap(mapOf({ ...panelOf((s) => 2 - s), regions: regionsTo(violated) }), options);
+  const fills = { proved: '#b4d0e7', violated: '#f0a987', undecided: '#f8f0c4' };
+  const count = (text: string, part: string) => text.split(part).length - 1;
+
+  test.each([
+    [3, ['proved', 'violated', 'undecided']],
+    [2, ['proved', 'violated']],
+    [5, ['proved', 'undecided']],
+  ] as const)(
+    'up to %d: fills and legend entries of the states that are there, and no others: %j',
+    (violated, states) => {
+      const { content } = draw(violated);
+      for (const [state, colour] of Object.entries(fills)) {
+        const isThere = (states as readonly string[]).includes(state);
+        // Once in the panel, once in the legend; two of the states have a pattern above the colour.
+        expect(count(content, `fill="${colour}"`)).toBe(isThere ? 2 : 0);
+        expect(count(content, `fill="url(#map-${state})"`)).toBe(isThere && state !== 'proved' ? 2 : 0);
+      }
+    },
+  );
+
+  test('a rectangle stands where its bounds say: the undecided one from s = 2 to 3 of 0 … 5', () => {
+    const { content } = draw(3);
+    const [, x, width] = /<rect x="([\d.]+)" y="[\d.]+" width="([\d.]+)"[^>]*fill="none"/.exec(content) ?? [];
+    const [, from, to] = /d="M([\d.]+) [\d.]+H([\d.]+)V[\d.]+H[\d.]+Z" fill="#f8f0c4"/.exec(content) ?? [];
+    expect(Number(from)).toBeCloseTo(Number(x) + Number(width) * 0.4, 2);
+    expect(Number(to)).toBeCloseTo(Number(x) + Number(width) * 0.6, 2);
+  });
+
+  test('says what it is worth: boxes, rewrites, tolerance, and what the lines are not', () => {
+    const { description } = draw(3);
+    for (const words of ['1 234 boxes', 'exact rewrites', '10^−9', 'budget of boxes ended', 'no proof']) {
+      expect(description).toContain(words);
+    }
+  });
 });
 
 test('a letter without an outline stays text', () => {

@@ -1,5 +1,6 @@
 import type { Curve, CurveSet } from '../../src/finding/curves.ts';
 import type { MapPanel, MarginMap } from '../../src/finding/margin-map.ts';
+import type { PlaneRegions, Rectangle } from '../../src/finding/regions.ts';
 
 const axis = (name: string, upper: number) => ({
   name,
@@ -53,6 +54,20 @@ export function mapOf(...panels: readonly MapPanel[]): MarginMap {
     x: axis('s', 5),
     y: axis('alpha', 5),
     panels,
+  };
+}
+
+/** Proved below s = 2 of 0 … 5, violated from `violated` on, undecided between. */
+export function regionsTo(violated: number): PlaneRegions {
+  const strip = (lower: number, upper: number): Rectangle[] => (lower < upper ? [[lower, upper, 0, 5]] : []);
+  return {
+    proved: strip(0, 2),
+    undecided: strip(2, violated),
+    violated: strip(violated, 5),
+    shares: { proved: 0.4, undecided: (violated - 2) / 5, violated: (5 - violated) / 5 },
+    boxes: 1234,
+    stop: 'budget',
+    rewrites: ['merge-logarithms'],
   };
 }
 

@@ -42,12 +42,13 @@ describe.skipIf(chromiumPath === undefined)(`the report in a browser (${chromium
     spawnSync(process.execPath, ['build.js', 'page'], { stdio: 'inherit' });
     folder = mkdtempSync(join(tmpdir(), 'rungcheck-report-'));
     writeFileSync(join(folder, 'hostile.yaml'), hostile);
-    const write = async (name: string, sheets: readonly string[]) => {
-      const args = ['report', ...sheets, '--only', only, '--no-cache', '--no-project', '--out', fileOf(name)];
+    const write = async (name: string, sheets: readonly string[], ...more: string[]) => {
+      const args = ['report', ...sheets, '--only', only, '--no-cache', '--no-project', ...more, '--out', fileOf(name)];
       expect(await run(args)).toMatchObject({ status: 0, err: '' });
     };
     await write('pbe', ['pbe']);
     await write('several', ['revpbe', 'pbe', 'spw92']);
+    await write('proved', ['revpbe'], '--prove', '--boxes', '4000');
     await write('hostile', [join(folder, 'hostile.yaml')]);
     browser = await openBrowser();
   }, 120_000);
@@ -217,6 +218,56 @@ describe.skipIf(chromiumPath === undefined)(`the report in a browser (${chromium
     expect(complaints).toEqual([]);
   });
 
+  test('with --prove the maps show what is proved, and can show the margin instead', async () => {
+    const { page, complaints } = await visit(browser, fileOf('proved'));
+    await open(page, 'lieb-oxford');
+    const map = host(page, 'lieb-oxford');
+    const legend = () => map.locator('svg .legend text').allTextContents();
+    const shares = async () => (await legend()).map((text) => Number(/([\d.]+) %$/.exec(text)?.[1]));
+    expect(await legend()).toEqual([
+      expect.stringMatching(/^proved to hold [\d.]+ %$/),
+      expect.stringMatching(/^proved to violate [\d.]+ %$/),
+      expect.stringMatching(/^undecided [\d.]+ %$/),
+    ]);
+    for (const state of ['proved', 'violated', 'undecided']) {
+      // In the picture and in its legend.
+      expect(await map.locator(`path.region-${state}`).count()).toBe(2);
+    }
+    expect(await map.locator('.note.proof').textContent()).toContain(
+      'Over ζ: holds for every value, violated at some value.',
+    );
+    expect(await map.locator('.note.proof').textContent()).toMatch(/Violated parts also from [\d ]+ boxes at ζ = 1,/);
+    // Every ζ must hold it over the plane; at ζ = 0 more of it does.
+    const [overAll = 0] = await shares();
+    await map.locator('input[type=range]').focus();
+    await page.keyboard.press('Home');
+    await expect.poll(() => map.locator('.note.proof').textContent()).toContain('on this plane at ζ = 0 alone');
+    await expect.poll(async () => (await shares())[0]).toBeGreaterThan(overAll);
+    await map.getByLabel('what is proved').uncheck();
+    expect(await map.locator('path[class^=region-]').count()).toBe(0);
+    expect((await legend()).join()).toMatch(/margin/);
+    await page.close();
+    expect(complaints).toEqual([]);
+  });
+
+  test('with --prove the words say what is proved, certified and undecided; without it that nothing is', async () => {
+    const { page } = await visit(browser, fileOf('proved'));
+    expect(await page.locator('#c-correlation-non-positive .facts').first().textContent()).toContain(
+      'proved on the whole domain, wherever the formula has a value',
+    );
+    const violated = await page.locator('#c-exchange-lieb-oxford .facts').first().textContent();
+    expect(violated).toMatch(
+      /Of the domain proved to hold on 64\.4\s%, proved to violate on 35\.6\s% \(s ≥ 3\.22\) and undecided on <\s0\.01\s%.*certified/,
+    );
+    expect(await page.locator('#summary').textContent()).toContain('A double rung: proved on the whole domain');
+    await page.close();
+    const { page: other } = await visit(browser, fileOf('pbe'));
+    expect(await other.locator('#asked').textContent()).toContain(
+      'not asked for: “holds” means that no violation was found',
+    );
+    await other.close();
+  });
+
   test('nothing of a sheet becomes markup or runs', async () => {
     const { page, complaints } = await visit(browser, fileOf('hostile'));
     expect(await page.locator('img, iframe, b[onclick], svg[onload], a[href^=javascript]').count()).toBe(0);
@@ -245,7 +296,7 @@ describe.skipIf(chromiumPath === undefined)(`the report in a browser (${chromium
   test.each([390, 820, 1440])(
     'at %i pixels only tables and formulas scroll sideways, never the page',
     async (width) => {
-      for (const name of ['pbe', 'several']) {
+      for (const name of ['pbe', 'several', 'proved']) {
         const { page } = await visit(browser, fileOf(name));
         await page.setViewportSize({ width, height: 900 });
         await page.evaluate(() => {

@@ -11,7 +11,7 @@ import { evaluateIntervals, intervalsOver } from '../kernel/interval-point.ts';
 import type { Rational } from '../number/rational.ts';
 import { toNumber } from '../number/rational.ts';
 import type { BranchAxis } from '../search/branch.ts';
-import { decidableForm, polarisationRoot, type RewriteName, type RewrittenForm, rewriteMargin } from './forms.ts';
+import { constantMargin, decidableForm, polarisationRoot, type RewriteName, rewriteMargin } from './forms.ts';
 
 /** What is to be proved: that a margin is at least −tolerance wherever in a box it has a value. */
 export interface Claim {
@@ -62,17 +62,16 @@ export function claimOf(
   const plain = build();
   if (!haveValues(graph, plain)) return 'a constant in the formula has no value';
   const { space } = condition.definition;
-  const form = (margin: NodeId): RewrittenForm =>
-    rewriteMargin(graph, margin, space === 'slice' ? allowed : allowed.filter((name) => name !== 'polarisation-root'), {
-      inside: signsOver(graph, settings.domain, condition, neverNegative),
-      closed: signsOver(graph, settings.domain, condition, ['rs']),
-    });
+  const signs = {
+    inside: signsOver(graph, settings.domain, condition, neverNegative),
+    closed: signsOver(graph, settings.domain, condition, ['rs']),
+  };
   const ofEnergy = allowed.filter((name) => name === 'merge-logarithms' || name === 'separate-blends');
-  // The two sides of an identity are the same as they stand, and may not be with only one rewritten.
-  const direct = ofEnergy.length === 0 || space === 'spin' ? form(plain) : undefined;
-  const isIdentity = direct !== undefined && variablesOf(graph, [direct.node]).size === 0;
-  const rewritten = isIdentity || ofEnergy.length === 0 ? plain : build(decidableForm);
-  const made = rewritten === plain && direct !== undefined ? direct : form(rewritten);
+  // The sides of an identity are one expression as they stand, and may not be with only one of them rewritten.
+  const constant = space === 'spin' ? constantMargin(graph, plain, allowed, signs) : undefined;
+  const rewritten = constant !== undefined || ofEnergy.length === 0 ? plain : build(decidableForm);
+  const ofMargin = space === 'slice' ? allowed : allowed.filter((name) => name !== 'polarisation-root');
+  const made = constant ?? rewriteMargin(graph, rewritten, ofMargin, signs);
   const forms = [made.node];
   const hasZeta = made.rewrites.includes('polarisation-root');
   const rewrites = [...(rewritten === plain ? [] : ofEnergy), ...made.rewrites];
@@ -87,7 +86,7 @@ export function claimOf(
   });
   return {
     graph,
-    signs: signsOver(graph, settings.domain, condition, neverNegative),
+    signs: signs.inside,
     forms,
     variables: axes.map(({ name }) => name),
     axes: axes.map(({ axis }) => axis),

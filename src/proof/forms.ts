@@ -5,7 +5,7 @@ import { substitute, variablesOf } from '../graph/traverse.ts';
 import { rational } from '../number/rational.ts';
 import { separateBlends } from '../rewrite/blend.ts';
 import { clampBranches } from '../rewrite/clamp.ts';
-import { factorSums } from '../rewrite/factor.ts';
+import { constantValue, factorSums } from '../rewrite/factor.ts';
 import { mergeLogarithms } from '../rewrite/logarithm.ts';
 import { shiftMaxima } from '../rewrite/maximum.ts';
 import { joinRoots } from '../rewrite/root.ts';
@@ -83,6 +83,20 @@ export function rewriteMargin(
     node = made;
   }
   return { node, rewrites };
+}
+
+/** A margin that is a constant wherever it has a value, as that of an identity whose sides are one expression. */
+export function constantMargin(
+  graph: Graph,
+  margin: NodeId,
+  allowed: readonly RewriteName[],
+  signs: DomainSigns,
+): RewrittenForm | undefined {
+  if (!allowed.includes('factor-sums')) return undefined;
+  const others = allowed.filter((name) => name !== 'factor-sums' && name !== 'polarisation-root');
+  const { node, rewrites } = rewriteMargin(graph, margin, others, signs);
+  const value = constantValue(graph, node);
+  return value === undefined ? undefined : { node: value, rewrites: [...rewrites, 'factor-sums'] };
 }
 
 /** Sums with their common factors taken out, and once more where powers of powers met in the first pass. */

@@ -63,7 +63,9 @@ export function recordOf(claim: Claim, result: SharedResult): ProofRecord {
     decided: '',
   };
   const reason = isProved
-    ? `proved by interval arithmetic on ${looked}, the smallest after ${deepest} halvings, wherever the formula has a value`
+    ? claim.axes.length === 0
+      ? 'proved: exact rewrites bring the margin to one constant, wherever the formula has a value'
+      : `proved by interval arithmetic on ${looked}, the smallest after ${deepest} halvings, wherever the formula has a value`
     : violated > 0
       ? `proved to be violated on ${percent(violated)} of the domain, to hold on ${percent(proved)}; ${looked}`
       : `${percent(undecided)} of the domain not decided after ${looked}: ${ends[stop]}`;

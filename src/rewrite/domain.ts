@@ -3,8 +3,9 @@ import type { Graph, NodeId } from '../graph/graph.ts';
 import { type Guard, guardsOf } from '../graph/guards.ts';
 import type { Signs } from '../graph/sign.ts';
 import { reachable, variablesOf } from '../graph/traverse.ts';
-import { clearedSum, isSum } from './fraction.ts';
+import { clearedSum } from './fraction.ts';
 import { productOf } from './product.ts';
+import { isSum } from './terms.ts';
 
 /** Something that a form needs to have a value. */
 interface Need {

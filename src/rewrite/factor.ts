@@ -1,12 +1,14 @@
 import { div, neg, unary } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import type { Signs } from '../graph/sign.ts';
+import { variablesOf } from '../graph/traverse.ts';
 import { rational } from '../number/rational.ts';
 import { keepsDomain } from './domain.ts';
-import { clearedSum, isSum, sumOfNodes } from './fraction.ts';
+import { clearedSum } from './fraction.ts';
 import { type Product, productNode, productOf, quotient, times } from './product.ts';
 import { imagesOf } from './simplify.ts';
 import { leafCount, type Sum, sumNode, sumOf } from './sum.ts';
+import { isSum, sumOfNodes, termsOf } from './terms.ts';
 
 /**
  * a·x + a·y + z → a·(x + y) + z, anywhere in a sum, and products with what is in both their parts cancelled. Both are
@@ -16,16 +18,29 @@ import { leafCount, type Sum, sumNode, sumOf } from './sum.ts';
  * they are the same: a·x + a·y is an interval at least as wide as a·(x + y).
  */
 export function factorSums(graph: Graph, outputs: readonly NodeId[], signs?: Signs): NodeId[] {
-  const images = imagesOf(graph, outputs, (id) => {
-    const node = graph.node(id);
-    if (isSum(graph, id)) return factored(graph, id);
-    const isProduct = node.kind === 'binary' ? node.op === 'mul' || node.op === 'div' : node.kind === 'power';
-    return isProduct ? cancelled(graph, id) : id;
-  });
+  const images = factoredImages(graph, outputs);
   return outputs.map((old) => {
     const form = images.get(old) as NodeId;
     const isKept = keepsDomain(graph, old, form, { image: (id) => images.get(id) as NodeId, ...(signs && { signs }) });
     return isKept ? form : old;
+  });
+}
+
+/**
+ * The constant that an output is at every point where it has a value, when factoring shows it to be one; undefined else.
+ * Unlike in factorSums nothing is kept of where that is.
+ */
+export function constantValue(graph: Graph, output: NodeId): NodeId | undefined {
+  const form = factoredImages(graph, [output]).get(output) as NodeId;
+  return variablesOf(graph, [form]).size === 0 ? form : undefined;
+}
+
+function factoredImages(graph: Graph, outputs: readonly NodeId[]): ReadonlyMap<NodeId, NodeId> {
+  return imagesOf(graph, outputs, (id) => {
+    const node = graph.node(id);
+    if (isSum(graph, id)) return factored(graph, id);
+    const isProduct = node.kind === 'binary' ? node.op === 'mul' || node.op === 'div' : node.kind === 'power';
+    return isProduct ? cancelled(graph, id) : id;
   });
 }
 
@@ -38,15 +53,10 @@ function factored(graph: Graph, id: NodeId): NodeId {
   const sum = sumOf(graph, id);
   const fraction = joinedFraction(graph, id, joinedCount(sum));
   if (fraction !== undefined) return fraction;
-  const terms = [...sum.terms].map(([term, coefficient]) => {
-    const product = productOf(graph, term);
-    return { ...product, coefficient: product.coefficient.mul(coefficient) };
-  });
-  const rest: Product[] = sum.constant.equals(0) ? [] : [{ coefficient: sum.constant, factors: new Map() }];
-  const found = grouped(graph, terms);
+  const found = grouped(graph, termsOf(graph, id));
   if (found === undefined)
     return joinedCount(sum) < leafCount(graph, id) || joinedCount(sum) > 2 ? inOrder(graph, sum) : id;
-  return sumOfNodes(graph, [...found, ...rest.map((product) => productNode(graph, product))]);
+  return sumOfNodes(graph, found);
 }
 
 /** The terms in the order of ids, so that equal sums are one node. */

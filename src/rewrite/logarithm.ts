@@ -2,10 +2,10 @@ import { constant, div, mul, sub, unary } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { reachable } from '../graph/traverse.ts';
 import { keepsDomain } from './domain.ts';
-import { isSum } from './fraction.ts';
 import { polynomialDifference, polynomialOf } from './polynomial.ts';
 import { type Product, productNode, productOf, quotient, sameProduct, unitProduct } from './product.ts';
 import { mapGraph } from './simplify.ts';
+import { isSum } from './terms.ts';
 
 /**
  * c + k·log(1 + (e^(−c/k) − 1)·q) → k·log(1 + (e^(c/k) − 1)·(1 − q)), anywhere in a sum.

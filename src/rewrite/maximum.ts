@@ -4,11 +4,11 @@ import type { Signs } from '../graph/sign.ts';
 import { reachable } from '../graph/traverse.ts';
 import { rational } from '../number/rational.ts';
 import { hasCertainValue, keepsDomain } from './domain.ts';
-import { isSum, sumOfNodes } from './fraction.ts';
 import { polynomialSum } from './polynomial.ts';
 import { type Product, productNode, productOf, quotient, times } from './product.ts';
 import { mapGraph } from './simplify.ts';
 import { sumOf } from './sum.ts';
+import { isSum, sumOfNodes, termsOf } from './terms.ts';
 
 /**
  * max(a, b) → a + max(b − a, 0), where a is also used elsewhere, and sums then collected by a: as in revisions of a
@@ -124,16 +124,11 @@ function byBase(graph: Graph, product: Product, base: NodeId): ByBase {
   for (const [factor, exponent] of product.factors) {
     if (exponent !== 1 || !isSum(graph, factor)) continue;
     const rest = quotient(product, { coefficient: rational(1), factors: new Map([[factor, 1]]) });
-    const sum = sumOf(graph, factor);
-    const parts = [...sum.terms].map(([term, coefficient]) => {
-      const own = productOf(graph, term);
-      return byBase(graph, { ...own, coefficient: own.coefficient.mul(coefficient) }, base);
-    });
+    const parts = termsOf(graph, factor).map((term) => byBase(graph, term, base));
     if (!parts.some(({ coefficients }) => coefficients.length > 0)) continue;
-    const constantTerm = sum.constant.equals(0) ? [] : [{ coefficient: sum.constant, factors: new Map() }];
     return {
       coefficients: parts.flatMap((part) => part.coefficients.map((term) => times(rest, term))),
-      others: [...parts.flatMap((part) => part.others), ...constantTerm].map((term) => times(rest, term)),
+      others: parts.flatMap((part) => part.others).map((term) => times(rest, term)),
     };
   }
   return { coefficients: [], others: [product] };

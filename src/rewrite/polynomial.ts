@@ -1,8 +1,9 @@
 import { constant, mul, power } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import { type Rational, rational } from '../number/rational.ts';
-import { type Product, productOf } from './product.ts';
+import type { Product } from './product.ts';
 import { type Sum, sumNode, sumOf } from './sum.ts';
+import { termsOf } from './terms.ts';
 
 /** A polynomial in nodes; each monomial by the text of its exponents. */
 export interface Polynomial {
@@ -110,11 +111,7 @@ function expanded(graph: Graph, { coefficient, factors }: Product, isDeep = fals
 function deepPolynomial(graph: Graph, id: NodeId): Polynomial | undefined {
   const sum = sumOf(graph, id);
   if (sum.terms.size === 1 && sum.terms.has(id)) return single(id, 1);
-  const parts = [...sum.terms].map(([term, coefficient]) => {
-    const own = productOf(graph, term);
-    return expanded(graph, { ...own, coefficient: own.coefficient.mul(coefficient) }, true);
-  });
+  const parts = termsOf(graph, id).map((term) => expanded(graph, term, true));
   if (parts.some((part) => part === undefined)) return undefined;
-  const rest = { coefficient: sum.constant, powers: new Map() };
-  return collect([...parts.flatMap((part) => [...(part as Polynomial).monomials.values()]), rest]);
+  return collect(parts.flatMap((part) => [...(part as Polynomial).monomials.values()]));
 }

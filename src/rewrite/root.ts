@@ -1,11 +1,10 @@
-import { constant, div, power } from '../graph/build.ts';
+import { div, power } from '../graph/build.ts';
 import type { Graph, NodeId } from '../graph/graph.ts';
 import type { Signs } from '../graph/sign.ts';
 import { rational } from '../number/rational.ts';
-import { isSum, sumOfNodes } from './fraction.ts';
 import { type Product, productNode, productOf, quotient, raised, times } from './product.ts';
 import { mapGraph } from './simplify.ts';
-import { sumOf } from './sum.ts';
+import { isSum, sumOfNodes, termsOf } from './terms.ts';
 
 /**
  * g·√(c²/(kg + b)² + …) → √((c/k)²·(kg/(kg + b))² + g²·…) for g ≥ 0: g = √g² then. Where the left-hand side has a value
@@ -50,15 +49,6 @@ function joined(graph: Graph, id: NodeId, signs: Signs): NodeId | undefined {
     }
   }
   return undefined;
-}
-
-function termsOf(graph: Graph, id: NodeId): Product[] {
-  const sum = sumOf(graph, id);
-  const terms = [...sum.terms].map(([term, coefficient]) => {
-    const product = productOf(graph, term);
-    return { ...product, coefficient: product.coefficient.mul(coefficient) };
-  });
-  return sum.constant.equals(0) ? terms : [...terms, productOf(graph, constant(graph, sum.constant))];
 }
 
 /** Both terms of each sum whose square some term is divided by. */

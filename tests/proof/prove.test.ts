@@ -19,7 +19,13 @@ describe('known proofs on the standard domain', () => {
     ['pbe', 'correlation-non-positive', 5_000],
     ['pbe', 'lieb-oxford', 20_000],
     ['pbe', 'exchange-coordinate-scaling', 1],
-    ['scan', 'exchange-hartree-fock-bound', 20_000],
+    ['pbe', 'correlation-coordinate-scaling', 20_000],
+    ['scan', 'exchange-hartree-fock-bound', 1_000],
+    ['scan', 'correlation-non-positive', 5_000],
+    ['scan', 'lieb-oxford', 5_000],
+    ['r2scan', 'exchange-non-positive', 1_000],
+    ['tpss', 'correlation-non-positive', 5_000],
+    ['tpss', 'exchange-lieb-oxford', 20],
     ['pw92', 'correlation-non-positive', 1_000],
     ['pw92', 'correlation-coordinate-scaling', 10_000],
     ['pw92', 'correlation-kinetic-ceiling', 10_000],
@@ -39,6 +45,18 @@ describe('known proofs on the standard domain', () => {
       domain: { name: 'custom', axes },
     });
     expect(record.provedShare).toBe(1);
+  });
+});
+
+describe('identities', () => {
+  it.each([
+    ['pbe', 'correlation-spin-symmetry'],
+    ['scan', 'exchange-spin-scaling'],
+  ])('%s holds %s by algebra: exact rewrites bring both sides to one expression', (functional, condition) => {
+    const { record, claim } = prove(functional, condition, 1);
+    expect(record).toMatchObject({ stop: 'decided', boxes: 1, provedShare: 1 });
+    expect(record.reason).toContain('one constant');
+    expect(claim?.variables).toEqual([]);
   });
 });
 

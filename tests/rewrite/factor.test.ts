@@ -8,7 +8,7 @@ import { evaluateDecimal } from '../../src/kernel/decimal.ts';
 import { exactDecimal } from '../../src/number/decimal.ts';
 import { rational } from '../../src/number/rational.ts';
 import { keepsDomain } from '../../src/rewrite/domain.ts';
-import { factorSums } from '../../src/rewrite/factor.ts';
+import { constantValue, factorSums } from '../../src/rewrite/factor.ts';
 import { arbitraryExpression, variableNames } from '../graph/arbitrary.ts';
 import { expectSame } from './same-value.ts';
 
@@ -93,6 +93,16 @@ describe('common factors', () => {
       ),
       { numRuns: 300, seed: 11 },
     );
+  });
+});
+
+describe('constants', () => {
+  it('an identity is 0 whatever its sides divide by, and what only looks like one is not', () => {
+    const left = div(g, mul(g, a, add(g, b, c)), x);
+    const right = add(g, div(g, mul(g, c, a), x), div(g, mul(g, b, a), x));
+    expect(constantValue(g, unary(g, 'abs', sub(g, left, right)))).toBe(constant(g, 0));
+    expect(constantValue(g, sub(g, left, add(g, right, a)))).toBeUndefined();
+    expect(constantValue(g, sub(g, power(g, power(g, a, rational(2)), rational(1, 2)), a))).toBeUndefined();
   });
 });
 

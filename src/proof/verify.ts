@@ -1,32 +1,61 @@
 import type { Condition } from '../constraint/condition.ts';
 import type { Certificate } from '../finding/certificate.ts';
 import type { Functional } from '../functional/functional.ts';
+import { argumentsOf, type Graph, type Node, type NodeId } from '../graph/graph.ts';
+import { reachable, variablesOf } from '../graph/traverse.ts';
 import { evaluateDecimal } from '../kernel/decimal.ts';
-import { makeDecimalForms } from '../kernel/decimal-forms.ts';
-import { decimalContext } from '../number/decimal.ts';
+import { decimalContext, exactDecimal } from '../number/decimal.ts';
 import { parseDecimal, type Rational } from '../number/rational.ts';
-import { type BranchAxis, boxLetters, middleOf, relativeWidth, rootBoxes } from '../search/branch.ts';
 import { certifiedDomain, constraintHash, digestOf, functionalHash } from './certificate.ts';
 import { type Claim, claimOf } from './claim.ts';
 import { polarisationRoot, type RewriteName, rewriteNames } from './forms.ts';
+import { type Leaves, leavesOf } from './leaves.ts';
+import { makeRecheck, type RecheckWork, recheckWork } from './recheck.ts';
 
 export type Verification =
   | { readonly ok: true; readonly leaves: number }
   | { readonly ok: false; readonly reason: string };
 
-const refused = (reason: string): Verification => ({ ok: false, reason });
+const refused = (reason: string): Verification & { readonly ok: false } => ({ ok: false, reason });
+
+/** A certificate of which only the boxes are left to be evaluated. */
+export interface OpenVerification {
+  readonly ok: true;
+  readonly claim: Claim;
+  readonly work: RecheckWork;
+  readonly leaves: Leaves;
+}
 
 /**
  * Checks a certificate again: that it is whole, that it is for these sheets, that its boxes cover the domain, that the
  * rewrites it names do not change the margin at sample points, and that the margin is at least −tolerance on each of
- * its boxes by the decimal evaluator.
+ * its boxes by decimal arithmetic.
  */
 export function verifyCertificate(
   certificate: Certificate,
   condition: Condition,
   functional: Functional,
-  onLeaves: (leaves: number) => void = () => {},
 ): Verification {
+  const open = openVerification(certificate, condition, functional);
+  return open.ok ? verificationOf(open, makeRecheck(open.work)(open.leaves.boxes)) : open;
+}
+
+/** What is found once the boxes are evaluated; `failing` is the index of one that does not hold, −1 for none. */
+export function verificationOf({ claim, leaves }: OpenVerification, failing: number): Verification {
+  if (failing < 0) return { ok: true, leaves: leaves.letters.length };
+  const words = claim.axes.map((_axis, axis) => {
+    const at = 2 * (failing * claim.axes.length + axis);
+    return `${claim.variables[axis]} ${leaves.boxes[at]}…${leaves.boxes[at + 1]}`;
+  });
+  return refused(`box ${(leaves.letters[failing] as number) + 1} cannot be verified: ${words.join(', ')}`);
+}
+
+/** All the checks but that of the boxes. */
+export function openVerification(
+  certificate: Certificate,
+  condition: Condition,
+  functional: Functional,
+): OpenVerification | (Verification & { readonly ok: false }) {
   if (digestOf(certificate) !== certificate.digest)
     return refused('its content does not match its digest: it was changed');
   if (functionalHash(functional) !== certificate.functionalHash)
@@ -48,7 +77,10 @@ export function verifyCertificate(
   const plain = claimOf(ofTolerance, functional, settings, []);
   if (typeof plain === 'string') return refused(plain);
   if (claim.rewrites.length > 0 && !agree(plain, claim)) return refused('the rewrites change the margin');
-  return checkBoxes(claim, certificate, onLeaves);
+  const { tree, boxes } = certificate;
+  if (tree.length !== boxes) return refused(`it tells of ${tree.length} boxes and not of ${boxes}`);
+  const leaves = leavesOf(claim.axes, tree);
+  return typeof leaves === 'string' ? refused(leaves) : { ok: true, claim, work: recheckWork(claim), leaves };
 }
 
 function valuesOf(texts: Readonly<Record<string, string>>): Map<string, Rational> {
@@ -60,7 +92,8 @@ function valuesOf(texts: Readonly<Record<string, string>>): Map<string, Rational
   );
 }
 
-function axesDifference({ axes, variables }: Claim, certificate: Certificate): string | undefined {
+function axesDifference(claim: Claim, certificate: Certificate): string | undefined {
+  const { axes, variables } = claim;
   const own = axes.map(({ lower, upper, scale, divisions }, index) => ({
     name: variables[index],
     lower: Number.isFinite(lower) ? lower : null,
@@ -68,15 +101,24 @@ function axesDifference({ axes, variables }: Claim, certificate: Certificate): s
     scale,
     divisions,
   }));
-  return JSON.stringify(own) === JSON.stringify(certificate.variables)
+  return JSON.stringify(own) === JSON.stringify(certificate.variables) && coversPolarisation(claim, certificate)
     ? undefined
     : 'its boxes are not those of the domain that it names';
 }
 
-/** How often a box that the decimal forms do not prove at once is halved. */
-const mostHalvings = 6;
+/** Whether every ζ = 1 − w³ of the domain comes from a w between the ends. */
+function coversPolarisation({ axes, variables }: Claim, { domain }: Certificate): boolean {
+  const axis = axes[variables.indexOf(polarisationRoot)];
+  if (axis === undefined) return true;
+  const zeta = domain.find(({ name }) => name === 'zeta');
+  // Digits enough for the cube of any ordinary double.
+  const context = decimalContext(400);
+  const cube = (w: number) => context.from(exactDecimal(w)).pow(3);
+  const distance = (value: number) => context.from(1).minus(exactDecimal(value));
+  return cube(axis.lower).lte(distance(zeta?.upper ?? 1)) && cube(axis.upper).gte(distance(zeta?.lower ?? -1));
+}
 
-const samples = 24;
+const samples = 12;
 const sampleDigits = 40;
 
 /** Whether the margin as written and as rewritten agree at sample points to 25 digits, wherever the first has a value. */
@@ -88,73 +130,35 @@ function agree(plain: Claim, rewritten: Claim): boolean {
     state = (Math.imul(state, 1664525) + 1013904223) >>> 0;
     return (state + 0.5) / 2 ** 32;
   };
+  // In one graph, so that what both have in common is evaluated once.
+  const { graph, forms } = rewritten;
+  const margins = [copyInto(graph, plain.graph, plain.forms[0] as NodeId), ...forms];
   let compared = 0;
   for (let count = 0; count < samples; count++) {
     const point = new Map(
-      rewritten.variables.map((name, index) => {
-        const { lower, upper } = rewritten.axes[index] as BranchAxis;
-        return [name, context.from(lower + next() * (Math.min(upper, lower + 1e3) - lower))] as const;
+      [...variablesOf(graph, margins)].map((name) => {
+        // What only the margin as written depends on, in 0…1.
+        const axis = rewritten.axes[rewritten.variables.indexOf(name)] ?? { lower: 0, upper: 1 };
+        const lower = Math.max(axis.lower, -1e3);
+        return [name, context.from(lower + next() * (Math.min(axis.upper, lower + 1e3) - lower))] as const;
       }),
     );
     const w = point.get(polarisationRoot);
     if (w !== undefined) point.set('zeta', context.from(1).minus(w.pow(3)));
-    const [a] = evaluateDecimal(plain.graph, [plain.forms[0] as number], point, sampleDigits);
-    const [b] = evaluateDecimal(rewritten.graph, [rewritten.forms[0] as number], point, sampleDigits);
-    if (a === undefined || b === undefined || !a.isFinite()) continue;
+    const [a, ...others] = evaluateDecimal(graph, margins, point, sampleDigits);
+    if (a === undefined || !a.isFinite()) continue;
     compared++;
-    if (!a.minus(b).abs().lte(a.abs().plus(1).times('1e-25'))) return false;
+    for (const b of others) if (!a.minus(b).abs().lte(a.abs().plus(1).times('1e-25'))) return false;
   }
   return compared > samples / 2;
 }
 
-function checkBoxes(claim: Claim, { tree, boxes }: Certificate, onLeaves: (leaves: number) => void): Verification {
-  const { axes, variables, forms, graph, tolerance } = claim;
-  if (tree.length !== boxes) return refused(`it tells of ${tree.length} boxes and not of ${boxes}`);
-  const evaluators = forms.map((form) => makeDecimalForms(graph, form, variables, new Set(['rs'])));
-  const width = 2 * axes.length + 1;
-  const roots = rootBoxes(axes);
-  let level: (readonly (readonly [number, number])[])[] = Array.from({ length: roots.length / width }, (_, row) =>
-    axes.map(
-      (_axis, axis) => [roots[row * width + 2 * axis] as number, roots[row * width + 2 * axis + 1] as number] as const,
-    ),
-  );
-  let read = 0;
-  let leaves = 0;
-  while (level.length > 0) {
-    const next: (readonly (readonly [number, number])[])[] = [];
-    for (const box of level) {
-      const letter = tree[read++];
-      if (letter === boxLetters.proved) {
-        leaves++;
-        onLeaves(1);
-        if (!holds(box, mostHalvings))
-          return refused(`box ${read} cannot be verified: ${box.map((pair) => pair.join('…')).join(', ')}`);
-        continue;
-      }
-      const axis = letter === undefined ? Number.NaN : Number.parseInt(letter, 10);
-      const divided = box[axis];
-      const middle = divided && middleOf(divided[0], divided[1], (axes[axis] as BranchAxis).scale);
-      if (divided === undefined || middle === undefined) return refused(`box ${read} is neither proved nor divided`);
-      next.push(box.with(axis, [divided[0], middle]), box.with(axis, [middle, divided[1]]));
-    }
-    level = next;
+function copyInto(graph: Graph, from: Graph, output: NodeId): NodeId {
+  const images = new Map<NodeId, NodeId>();
+  for (const id of reachable(from, [output])) {
+    const node = from.node(id);
+    const args = argumentsOf(node).map((part) => images.get(part) as NodeId);
+    images.set(id, graph.intern('args' in node ? ({ ...node, args } as unknown as Node) : node));
   }
-  function holds(box: readonly (readonly [number, number])[], halvings: number): boolean {
-    const proved = evaluators.some((evaluate) => {
-      const { lower, defined } = evaluate(box);
-      return defined && lower.gte(-tolerance);
-    });
-    if (proved || halvings === 0) return proved;
-    // The decimal forms are not the same as those of the search: a box may need to be halved for them.
-    const widths = axes.map(({ lower, upper, scale }, axis) =>
-      relativeWidth(...(box[axis] as [number, number]), lower, upper, scale),
-    );
-    const axis = widths.indexOf(Math.max(...widths));
-    const [from, to] = box[axis] as readonly [number, number];
-    const middle = middleOf(from, to, (axes[axis] as BranchAxis).scale);
-    if (middle === undefined) return false;
-    return holds(box.with(axis, [from, middle]), halvings - 1) && holds(box.with(axis, [middle, to]), halvings - 1);
-  }
-
-  return read === tree.length ? { ok: true, leaves } : refused('it tells of more boxes than the domain has');
+  return images.get(output) as NodeId;
 }

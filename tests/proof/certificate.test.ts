@@ -55,6 +55,13 @@ describe('certificates', () => {
     expect(verifyCertificate(JSON.parse(JSON.stringify(made)), bound, functional)).toMatchObject({ ok: true });
   });
 
+  it.each(['tpss', 'tm'])(
+    'F_c ≥ 0 of %s is verified, the corner s = α = 0 where τ_W/τ is 0/0 among its boxes',
+    (id) => {
+      expect(verifyCertificate(certificateFor(id), condition, functionalOf(id))).toMatchObject({ ok: true });
+    },
+  );
+
   it('one changed character anywhere is refused', () => {
     for (const changed of [
       { ...certificate, deepest: certificate.deepest + 1 },
@@ -75,8 +82,21 @@ describe('certificates', () => {
     });
   });
 
-  it('a whole domain claimed to be one box is refused: the decimal forms do not prove it', () => {
-    const claimed = forged({ ...certificate, tree: '.', boxes: 1, deepest: 0, tolerance: 0 });
+  it('a whole domain claimed to be one box is refused where it needs thousands: the decimal forms do not prove it', () => {
+    const scaling = conditionOf('correlation-coordinate-scaling') as Condition;
+    const functional = functionalOf('pbe');
+    const { claim, result } = proveCondition(scaling, functional, standardSettings, { budget: 10, keepTree: true });
+    if (claim === undefined || result === undefined) throw new Error('not provable');
+    const made = certificateOf(scaling, functional, standardSettings, claim, result, '0.0.0');
+    const claimed = forged({ ...made, tree: '.', boxes: 1, deepest: 0 });
+    expect(verifyCertificate(claimed, scaling, functional)).toMatchObject({
+      ok: false,
+      reason: /box 1 cannot be verified: rs 0.01…100, w 0…1, s 0…5/ as unknown,
+    });
+  });
+
+  it('a false claim on boxes that cover the domain is refused: F_c of PW92 is not 0.01 everywhere', () => {
+    const claimed = forged({ ...certificate, tolerance: -0.01 });
     expect(verifyCertificate(claimed, condition, pw92)).toMatchObject({ ok: false });
   });
 

@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { checkRegime, regimes } from './regimes.ts';
 
 // A million arguments a regime take hours: RUNGCHECK_ENCLOSURES=1000000 npx vitest run tests/interval.
-const count = Number(process.env.RUNGCHECK_ENCLOSURES ?? 60);
+const count = Number(process.env.RUNGCHECK_ENCLOSURES ?? 270);
 
 describe('enclosures of functions against 50 digits', () => {
   it.each(regimes)(

@@ -35,7 +35,7 @@ export function addProofs(program: Command, terminal: Terminal, end: End): void 
         'Examples:',
         '  rungcheck prove pbe correlation-non-positive --certificate pbe.json && rungcheck verify pbe.json',
         '  rungcheck prove pbe exchange-lieb-oxford --domain unbounded',
-        '  rungcheck prove scan correlation-coordinate-scaling --tolerance 1e-4 --boxes 2e7 --state scan.json',
+        '  rungcheck prove r2scan correlation-interaction-monotonic --boxes 1e7 --state r2scan.json',
       ),
     )
     .action(async (sheet: string, constraint: string, options) => {

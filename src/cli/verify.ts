@@ -3,6 +3,7 @@ import { pathToFileURL } from 'node:url';
 import { failure, type Outcome, ProblemError, success } from '../errors/problem.ts';
 import { type Certificate, certificateSchema } from '../finding/certificate.ts';
 import { type OpenVerification, openVerification, verificationOf } from '../proof/verify.ts';
+import { countText } from '../report/number-text.ts';
 import { builtFolder } from '../run/program-files.ts';
 import { recheckBoxes } from '../run/recheck-threads.ts';
 import { findFunctional, loadConditions, openCatalogue } from './engine.ts';
@@ -35,7 +36,7 @@ export async function verifyCommand(file: string, options: VerifyOptions, termin
     return exitStatus.fails;
   }
   const { functional: id, constraint, tolerance } = certificate;
-  const boxes = `${result.leaves.toLocaleString('en')} ${result.leaves === 1 ? 'box' : 'boxes'}`;
+  const boxes = `${countText(result.leaves)} ${result.leaves === 1 ? 'box' : 'boxes'}`;
   terminal.writeOut(`verified: ${id} holds ${constraint} to ${tolerance} on all of ${boxes}, by decimal arithmetic\n`);
   return exitStatus.fine;
 }

@@ -1,8 +1,9 @@
 import { describe, expect, test } from 'vitest';
 import { parseExpression } from '../../src/expression/parse.ts';
 import { parseDecimal, type Rational, rational } from '../../src/number/rational.ts';
+import { decimalText } from '../../src/page/decimal-text.ts';
 import { escaped, html } from '../../src/page/markup.ts';
-import { decimalText, expressionMathml, termsMathml } from '../../src/page/mathml.ts';
+import { expressionMathml, termsMathml } from '../../src/page/mathml.ts';
 import { notation } from '../../src/page/notation.ts';
 
 function parsed(text: string) {

@@ -112,7 +112,9 @@ function signsOver(graph: Graph, domain: Domain, condition: Condition, positive:
   const [lower, upper] = box.get('zeta') ?? [0, 0];
   box.set(polarisationRoot, rootBounds(lower, upper));
   const bounds = intervalsOver(graph, box);
-  return makeSigns(graph, new Set(positive), (id) => bounds(id).lower);
+  // On a plane where a coordinate is 0 there is no inside.
+  const moving = positive.filter((name) => (box.get(name)?.[1] ?? 1) > 0);
+  return makeSigns(graph, new Set(moving), (id) => bounds(id).lower);
 }
 
 /** w = (1 − ζ)^(1/3), rounded outward. */

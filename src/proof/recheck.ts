@@ -26,8 +26,10 @@ export function recheckWork(claim: Claim): RecheckWork {
  * the claim: there what is said to be positive is not negative, or has no value.
  */
 function ownSigns({ graph, forms, variables, axes }: Claim): Signs {
-  const isPositive = (name: string, index: number) =>
-    coordinatesNotNegative.has(name) && (axes[index] as BranchAxis).lower >= 0;
+  const isPositive = (name: string, index: number) => {
+    const { lower, upper } = axes[index] as BranchAxis;
+    return coordinatesNotNegative.has(name) && lower >= 0 && upper > 0;
+  };
   const positive = new Set(variables.filter(isPositive));
   const byMaking = makeSigns(graph, positive);
   const domain = Float64Array.from(axes.flatMap(({ lower, upper }) => [lower, upper]));

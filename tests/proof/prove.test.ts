@@ -82,6 +82,17 @@ describe('known refutations', () => {
 });
 
 describe('what is not proved', () => {
+  it('on a plane at s = 0 nothing is taken to be positive there: TPSS has no value at s = α = 0, and all of it is open', () => {
+    const domain = customDomain(
+      new Map([
+        ['s', [0, 0]],
+        ['alpha', [0, 0]],
+      ]),
+    );
+    const { record } = prove('tpss', 'exchange-lieb-oxford', 50, { ...standardSettings, domain });
+    expect(record).toMatchObject({ provedShare: 0, undecidedShare: 1 });
+  });
+
   it('a budget that ends gives no proof, and the verdict stays holds', () => {
     const condition = conditionOf('lieb-oxford') as Condition;
     const functional = functionalOf('pbe');

@@ -11,6 +11,7 @@ process.chdir(dirname(fileURLToPath(import.meta.url)));
 const scripts = {
   bench: 'tests/bench/grid.ts',
   verdicts: 'tests/verdicts/write.ts',
+  proofs: 'tests/verdicts/write-proofs.ts',
   glyphs: 'tests/figure/glyphs/write.ts',
   soak: 'tests/ci/soak-long.ts',
 };

@@ -18,8 +18,9 @@ export function constraintHash({ definition, imports }: Condition): string {
   return hashOf(['constraint', definition.id, definition.text, ...used]);
 }
 
-export function hashOf(parts: readonly string[]): string {
-  return createHash('sha256').update(JSON.stringify(parts)).digest('hex');
+/** The hash of something that JSON can say. */
+export function hashOf(content: object): string {
+  return createHash('sha256').update(JSON.stringify(content)).digest('hex');
 }
 
 /** What is claimed, in the words of certificates. */
@@ -78,7 +79,7 @@ export function certificateOf(
 /** The digest of the other fields of a certificate or state, in their order. */
 export function digestOf(file: object): string {
   const { digest: _, ...body } = file as { readonly digest?: string };
-  return createHash('sha256').update(JSON.stringify(body)).digest('hex');
+  return hashOf(body);
 }
 
 function textsOf(values: ReadonlyMap<string, Rational>): Record<string, string> {

@@ -11,7 +11,14 @@ import { evaluateIntervals, intervalsOver } from '../kernel/interval-point.ts';
 import type { Rational } from '../number/rational.ts';
 import { toNumber } from '../number/rational.ts';
 import type { BranchAxis } from '../search/branch.ts';
-import { constantMargin, decidableForm, polarisationRoot, type RewriteName, rewriteMargin } from './forms.ts';
+import {
+  constantMargin,
+  coordinatesNotNegative,
+  decidableForm,
+  polarisationRoot,
+  type RewriteName,
+  rewriteMargin,
+} from './forms.ts';
 
 /** What is to be proved: that a margin is at least −tolerance wherever in a box it has a value. */
 export interface Claim {
@@ -28,7 +35,7 @@ export interface Claim {
 }
 
 /** Coordinates that are positive inside every domain. */
-const neverNegative = ['rs', 's', 'alpha', 's_up', 's_dn', 'alpha_up', 'alpha_dn', polarisationRoot];
+const neverNegative = [...coordinatesNotNegative, 's_up', 's_dn', 'alpha_up', 'alpha_dn'];
 
 export interface ClaimSettings {
   readonly domain: Domain;

@@ -73,7 +73,9 @@ export async function memoryOfRun(folder: string, sheets: number) {
 function residentKilobytes(pid: number | undefined): number | undefined {
   try {
     const text = readFileSync(`/proc/${pid}/status`, 'utf8');
-    return Number(/VmRSS:\s+(\d+)/.exec(text)?.[1] ?? Number.NaN);
+    // A process that is just ending has no such line.
+    const found = /VmRSS:\s+(\d+)/.exec(text);
+    return found === null ? undefined : Number(found[1]);
   } catch {
     return undefined;
   }
